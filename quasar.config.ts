@@ -1,0 +1,33 @@
+import { defineConfig } from '#q-app/wrappers';
+
+export default defineConfig(() => {
+  const apiPort = process.env.API_PORT ?? '8081';
+  return {
+    boot: ['session'],
+    css: [
+      '~@fontsource/noto-sans/latin-400.css',
+      '~@fontsource/noto-sans/latin-600.css',
+      '~@fontsource/noto-sans/greek-400.css',
+      '~@fontsource/noto-sans/greek-600.css',
+      '~@fontsource/noto-sans-mono/latin-400.css',
+      '~@fontsource/noto-sans-mono/latin-600.css',
+      '~@fontsource/noto-sans-mono/greek-400.css',
+      '~@fontsource/noto-sans-mono/greek-600.css',
+      'app.scss',
+    ],
+    extras: [], // fonts by @fontsource, icons drawn by us: nothing from a font set
+    build: {
+      target: { browser: ['es2022'], node: 'node20' },
+      vueRouterMode: 'history',
+      typescript: { strict: true, vueShim: true },
+      distDir: 'dist/spa',
+    },
+    devServer: {
+      port: Number(process.env.WEB_PORT ?? 9000),
+      open: false,
+      proxy: { '/api': { target: `http://127.0.0.1:${apiPort}`, changeOrigin: false } },
+    },
+    framework: { config: { dark: 'auto' }, lang: 'en-US', plugins: ['Notify', 'Dark'] },
+    animations: [],
+  };
+});
