@@ -1,0 +1,37 @@
+import type { ReplayPoint } from '../../../shared/model/replay-point';
+import type { CompleteCheck } from '../../api/replays';
+
+/** One point that a check asks for, with its result once there is one. */
+export interface CheckPoint {
+  index: number;
+  offsetHz: number;
+  esN0Db: number;
+  result: ReplayPoint | undefined;
+}
+
+/** Offsets of a range, evenly spaced, both ends included. */
+export function offsetsOf({ start, stop, points }: CompleteCheck['carrierOffsetHz']): number[] {
+  if (points < 2) return [start];
+  return Array.from({ length: points }, (_, place) => start + (place * (stop - start)) / (points - 1));
+}
+
+/** Every point of a check for one Es/N0, by rising offset. A result is found by its index, as the server numbers them. */
+export function pointsAt(check: CompleteCheck, esN0Db: number, results: readonly ReplayPoint[]): CheckPoint[] {
+  const offsets = offsetsOf(check.carrierOffsetHz);
+  const first = check.esN0Db.indexOf(esN0Db) * offsets.length;
+  const byIndex = new Map(results.map((result) => [result.index, result]));
+  return offsets
+    .map((offsetHz, place) => ({ index: first + place, offsetHz, esN0Db, result: byIndex.get(first + place) }))
+    .sort((a, b) => a.offsetHz - b.offsetHz);
+}
+
+/** The points worth reading first: each one that is not proved, its neighbours, both ends and the middle. */
+export function notablePoints(points: readonly CheckPoint[]): CheckPoint[] {
+  const open = (place: number) => points[place]?.result !== undefined && points[place].result.verdict !== 'pass';
+  const middle = Math.floor((points.length - 1) / 2);
+  return points.filter(
+    ({ result }, place) =>
+      result !== undefined &&
+      (open(place - 1) || open(place) || open(place + 1) || [0, middle, points.length - 1].includes(place)),
+  );
+}

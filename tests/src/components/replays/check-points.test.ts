@@ -1,0 +1,41 @@
+import { describe, expect, it } from 'vitest';
+import { notablePoints, offsetsOf, pointsAt } from '../../../../src/components/replays/check-points';
+import { check, result } from '../../support/replay';
+
+describe('offsetsOf', () => {
+  // By hand: 155 kHz in four steps of 38.75 kHz.
+  it('spaces the offsets evenly, both ends included', () => {
+    expect(offsetsOf(check.carrierOffsetHz)).toEqual([-77_500, -38_750, 0, 38_750, 77_500]);
+  });
+
+  it('gives the start alone for one point', () => {
+    expect(offsetsOf({ start: 5, stop: 9, points: 1 })).toEqual([5]);
+  });
+});
+
+describe('pointsAt', () => {
+  it('finds the results of the second Es/N0 behind those of the first', () => {
+    const points = pointsAt(check, 10, [result(1, 'pass'), result(6, 'fail')]);
+    expect(points.map(({ index }) => index)).toEqual([5, 6, 7, 8, 9]);
+    expect(points.map(({ result: found }) => found?.verdict)).toEqual([
+      undefined,
+      'fail',
+      undefined,
+      undefined,
+      undefined,
+    ]);
+  });
+
+  it('sorts by offset when the range runs downward', () => {
+    const downward = { ...check, carrierOffsetHz: { start: 10, stop: -10, points: 3 } };
+    expect(pointsAt(downward, 6.5, []).map(({ offsetHz }) => offsetHz)).toEqual([-10, 0, 10]);
+  });
+});
+
+describe('notablePoints', () => {
+  it('keeps what is not proved with its neighbours, the ends and the middle', () => {
+    const nine = { ...check, esN0Db: [6.5], carrierOffsetHz: { start: -4, stop: 4, points: 9 } };
+    const results = Array.from({ length: 9 }, (_, index) => result(index, index === 7 ? 'undecided' : 'pass'));
+    expect(notablePoints(pointsAt(nine, 6.5, results)).map(({ offsetHz }) => offsetHz)).toEqual([-4, 0, 2, 3, 4]);
+  });
+});
