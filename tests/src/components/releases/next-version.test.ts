@@ -8,7 +8,7 @@ describe('nextVersion', () => {
   });
 
   it('proposes the release that a preview leads to', () => {
-    expect(nextVersion(['1.4.0', '2.0.0-rc.1'])).toBe('2.0.0');
+    expect(nextVersion(['1.4.0', '1.4.1-rc.1'])).toBe('1.4.1');
   });
 
   it('begins with 1.0.0', () => {

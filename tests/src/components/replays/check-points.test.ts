@@ -34,8 +34,8 @@ describe('pointsAt', () => {
 
 describe('notablePoints', () => {
   it('keeps what is not proved with its neighbours, the ends and the middle', () => {
-    const nine = { ...check, esN0Db: [6.5], carrierOffsetHz: { start: -4, stop: 4, points: 9 } };
-    const results = Array.from({ length: 9 }, (_, index) => result(index, index === 7 ? 'undecided' : 'pass'));
-    expect(notablePoints(pointsAt(nine, 6.5, results)).map(({ offsetHz }) => offsetHz)).toEqual([-4, 0, 2, 3, 4]);
+    const eleven = { ...check, esN0Db: [6.5], carrierOffsetHz: { start: -5, stop: 5, points: 11 } };
+    const results = Array.from({ length: 11 }, (_, index) => result(index, index === 7 ? 'undecided' : 'pass'));
+    expect(notablePoints(pointsAt(eleven, 6.5, results)).map(({ offsetHz }) => offsetHz)).toEqual([-5, 0, 1, 2, 3, 5]);
   });
 });
