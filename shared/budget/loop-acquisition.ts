@@ -1,0 +1,81 @@
+import type { Acquisition, StageDesign } from '../model/design';
+import { sCurveShape } from '../detectors/detector';
+import type { DetectorModel } from '../detectors/detector';
+import { rotationalSymmetry } from '../detectors/modulations';
+import type { CompletePlan, Environment } from '../plan/complete';
+import { falseLockSpacingHz, lockInOmega, pullInSeconds, unambiguousOffsetHz } from './acquisition';
+import type { LoopDynamics } from './acquisition';
+
+export interface AcquisitionInput {
+  plan: CompletePlan;
+  model: DetectorModel;
+  /** The stage that runs first. */
+  first: StageDesign;
+  /** Largest offset that the integrator holds, Hz (carrier) or ppm (clock). */
+  held: number;
+}
+
+/**
+ * Largest carrier offset that both ends' tolerance and the Doppler shift make together, ± Hz; null when a tolerance
+ * is given in ppm of a carrier that is not.
+ */
+export function askedOffsetHz({ carrierFrequencyHz, carrierTolerancePpm, dopplerHz }: Environment): number | null {
+  if (carrierTolerancePpm === 0) return dopplerHz;
+  return carrierFrequencyHz === undefined ? null : 2 * carrierTolerancePpm * 1e-6 * carrierFrequencyHz + dopplerHz;
+}
+
+/** Range and ambiguity of a carrier loop. Lock-in and pull-in are estimates, and are there for order 2 only. */
+export function carrierAcquisition({ plan, model, first, held }: AcquisitionInput): Acquisition {
+  const { signal, carrier, environment } = plan;
+  const symmetry = rotationalSymmetry[signal.modulation];
+  const symbolRateBd = signal.symbolRateBd;
+  const offsetHz = askedOffsetHz(environment);
+  const averaged = carrier?.updateInterval ?? 1;
+  const offsetOmega = offsetHz === null ? null : 2 * Math.PI * offsetHz;
+  return {
+    unambiguousHz: unambiguousOffsetHz({ symmetry, symbolRateBd, averaged }),
+    falseLockSpacingHz: falseLockSpacingHz(symmetry, symbolRateBd),
+    offsetHz,
+    largestOffsetHz: held,
+    offsetPpm: null,
+    largestOffsetPpm: null,
+    ...estimates(first, model, { offsetOmega, symbolRateBd }),
+  };
+}
+
+/** Range of a clock loop: a clock error slips one symbol after another, an S-curve of period 1 symbol. */
+export function clockAcquisition({ plan, model, first, held }: AcquisitionInput): Acquisition {
+  const symbolRateBd = plan.signal.symbolRateBd;
+  const offsetPpm = 2 * plan.environment.clockTolerancePpm;
+  const { pullInSymbols } = estimates(first, model, { offsetOmega: offsetPpm * 1e-6 * symbolRateBd, symbolRateBd });
+  return {
+    unambiguousHz: null,
+    falseLockSpacingHz: null,
+    offsetHz: null,
+    largestOffsetHz: null,
+    offsetPpm,
+    largestOffsetPpm: held,
+    lockInHz: null,
+    pullInSymbols,
+  };
+}
+
+/** @param offsetOmega drift of the error that has to be pulled in, in the S-curve's own unit per second */
+function estimates(
+  first: StageDesign,
+  model: DetectorModel,
+  { offsetOmega, symbolRateBd }: { offsetOmega: number | null; symbolRateBd: number },
+) {
+  const dynamics = loopDynamics(first);
+  if (!dynamics) return { lockInHz: null, pullInSymbols: null };
+  const shape = sCurveShape(model);
+  return {
+    lockInHz: lockInOmega(dynamics, shape) / (2 * Math.PI),
+    pullInSymbols: offsetOmega === null ? null : pullInSeconds(dynamics, shape, offsetOmega) * symbolRateBd,
+  };
+}
+
+function loopDynamics({ damping, naturalFrequencyHz, stable }: StageDesign): LoopDynamics | null {
+  if (!stable || damping.exact === null || naturalFrequencyHz.exact === null) return null;
+  return { damping: damping.exact, omegaN: 2 * Math.PI * naturalFrequencyHz.exact };
+}

@@ -1,0 +1,33 @@
+import type { Design, LoopDesign } from './model/design';
+import type { Plan } from './model/plan';
+import { carrierLoop } from './loop/carrier-loop';
+import { clockLoop } from './loop/clock-loop';
+import { engineVersion } from './engine';
+import { findingsOf } from './findings';
+import { completePlan } from './plan/complete';
+import type { CompletePlan } from './plan/complete';
+import { requireConsistent } from './plan/consistency';
+
+/** A design without its digest, which whoever stores it makes. */
+export type WorkedOut = Omit<Design, 'digest'>;
+
+/**
+ * What a plan means: gains, responses, budgets, words, headroom and findings of its loops. Pure: the same plan gives
+ * the same design anywhere.
+ *
+ * @param plan a plan that has passed its schema, defaults filled in
+ * @throws {ParameterError} with a JSON pointer into the plan at a value that no loop can be worked out for
+ */
+export function workOut(plan: Plan): WorkedOut {
+  const complete = completePlan(plan);
+  requireConsistent(complete);
+  const loops = loopsOf(complete);
+  return { engine: engineVersion, plan: complete as unknown as Plan, ...loops, findings: findingsOf(complete, loops) };
+}
+
+function loopsOf(plan: CompletePlan): { carrier?: LoopDesign; clock?: LoopDesign } {
+  const loops: { carrier?: LoopDesign; clock?: LoopDesign } = {};
+  if (plan.carrier) loops.carrier = carrierLoop(plan, plan.carrier);
+  if (plan.clock) loops.clock = clockLoop(plan, plan.clock);
+  return loops;
+}

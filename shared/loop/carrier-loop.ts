@@ -1,0 +1,94 @@
+import type { LoopDesign } from '../model/design';
+import { carrierBudget } from '../budget/carrier-budget';
+import { carrierAcquisition } from '../budget/loop-acquisition';
+import { carrierDetector } from '../detectors/carrier';
+import { sCurve } from '../detectors/detector';
+import type { DetectorModel } from '../detectors/detector';
+import { carrierHeadroom, frequencyResolutionHz, largestOffsetHeldHz } from '../fixed-point/headroom';
+import { carrierGains, carrierOscillatorGain } from '../fixed-point/loop-scale';
+import { carrierWords } from '../fixed-point/words';
+import type { CarrierWords } from '../fixed-point/words';
+import type { CompleteCarrier, CompletePlan } from '../plan/complete';
+import { askedOffsetHz } from '../budget/loop-acquisition';
+import { solveStages, stageDesigns, wordStages } from './loop-design';
+import type { SolvedStages } from './loop-design';
+import { averagedSymbols } from './stage-loop';
+import type { StageLoop } from './stage-loop';
+
+/** The carrier recovery loop of a plan, worked out. */
+export function carrierLoop(plan: CompletePlan, carrier: CompleteCarrier): LoopDesign {
+  const { signal } = plan;
+  const updateRateHz = signal.symbolRateBd / carrier.updateInterval;
+  const model = carrierDetector(carrier.detector, signal.modulation, {
+    amplitude: signal.amplitude,
+    esN0: 10 ** (signal.esN0Db / 10),
+  });
+  const stages = solveStages('carrier', carrier, signal.symbolRateBd);
+  const detectorGain = averagedSymbols(carrier.updateInterval) * model.gain;
+  const words = carrierWords({ signal, carrier, detectorGain, stages: wordStages(stages) });
+  const oscillatorGain = carrierOscillatorGain(words);
+  const designs = stageDesigns({
+    stages,
+    loop: carrier,
+    words: words.stages,
+    effective: carrierGains(words, detectorGain),
+    perUnit: detectorGain * oscillatorGain,
+    updateRateHz,
+  });
+  const held = largestOffsetHeldHz(words, signal.symbolRateBd);
+  return {
+    updateRateHz,
+    detector: detectorOf(carrier, model, oscillatorGain),
+    stages: designs,
+    headroom: headroomOf(plan, words, carrier),
+    budget: budgetOf(plan, carrier, { model, stages, updateRateHz }),
+    acquisition: carrierAcquisition({ plan, model, first: designs[0]!, held }),
+    resolutionHz: frequencyResolutionHz(words, signal.symbolRateBd),
+    words,
+  };
+}
+
+function detectorOf(carrier: CompleteCarrier, model: DetectorModel, oscillatorGain: number): LoopDesign['detector'] {
+  const counted = averagedSymbols(carrier.updateInterval);
+  return {
+    name: carrier.detector,
+    gain: counted * model.gain,
+    gainWithoutNoise: counted * model.gainWithoutNoise,
+    oscillatorGain,
+    period: model.period,
+    variance: model.variance === null ? null : counted * model.variance,
+    curve: sCurve(model, counted),
+  };
+}
+
+function headroomOf({ signal, environment }: CompletePlan, words: CarrierWords, carrier: CompleteCarrier) {
+  return carrierHeadroom({
+    words,
+    symbolRateBd: signal.symbolRateBd,
+    amplitude: signal.amplitude,
+    peak: 1,
+    esN0Db: signal.esN0Db,
+    largestOffsetHz: askedOffsetHz(environment) ?? 0,
+    stageNames: carrier.stages.map(({ name }) => name),
+  });
+}
+
+interface BudgetParts {
+  model: DetectorModel;
+  stages: SolvedStages;
+  updateRateHz: number;
+}
+
+function budgetOf(plan: CompletePlan, carrier: CompleteCarrier, { model, stages, updateRateHz }: BudgetParts) {
+  const last = stages.solved[stages.solved.length - 1] as StageLoop;
+  return carrierBudget({
+    model,
+    stages: stages.solved.map(({ loop }, i) => ({ name: carrier.stages[i]!.name, loop })),
+    damping: last.damping ?? 1,
+    method: carrier.method,
+    prewarp: carrier.prewarp,
+    updateInterval: carrier.updateInterval,
+    updateRateHz,
+    phaseNoise: plan.environment.phaseNoise,
+  });
+}

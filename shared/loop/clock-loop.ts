@@ -1,0 +1,83 @@
+import type { LoopDesign } from '../model/design';
+import { clockAcquisition } from '../budget/loop-acquisition';
+import { clockDetector } from '../detectors/clock';
+import { sCurve } from '../detectors/detector';
+import { toNumber } from '../fixed-point/format';
+import { clockGains, clockOscillatorGain } from '../fixed-point/loop-scale';
+import { clockWords } from '../fixed-point/words';
+import type { ClockWords } from '../fixed-point/words';
+import type { CompleteClock, CompletePlan } from '../plan/complete';
+import { solveStages, stageDesigns, wordStages } from './loop-design';
+import { averagedSymbols } from './stage-loop';
+
+/** The clock recovery loop of a plan, worked out. */
+export function clockLoop(plan: CompletePlan, clock: CompleteClock): LoopDesign {
+  const { signal } = plan;
+  const { symbolRateBd, samplesPerSymbol } = signal;
+  const updateRateHz = symbolRateBd / clock.updateInterval;
+  const model = clockDetector(clock.detector, signal);
+  const stages = solveStages('clock', clock, symbolRateBd);
+  const counted = averagedSymbols(clock.updateInterval);
+  const detectorGain = counted * model.gain;
+  const words = clockWords({ signal, clock: realisable(clock), detectorGain, stages: wordStages(stages) });
+  const oscillatorGain = clockOscillatorGain(words, samplesPerSymbol);
+  const designs = stageDesigns({
+    stages,
+    loop: clock,
+    words: words.stages,
+    effective: clockGains(words, detectorGain, samplesPerSymbol),
+    perUnit: detectorGain * oscillatorGain,
+    updateRateHz,
+  });
+  return {
+    updateRateHz,
+    detector: {
+      name: clock.detector,
+      gain: detectorGain,
+      gainWithoutNoise: counted * model.gainWithoutNoise,
+      oscillatorGain,
+      period: model.period,
+      variance: null,
+      curve: sCurve(model, counted),
+    },
+    stages: designs,
+    headroom: [],
+    budget: null,
+    acquisition: clockAcquisition({
+      plan,
+      model,
+      first: designs[0]!,
+      held: largestErrorHeldPpm(words, samplesPerSymbol),
+    }),
+    resolutionHz: rateResolutionHz(words, { symbolRateBd, samplesPerSymbol }),
+    words,
+  };
+}
+
+/** The words know only what the datapath does; what it does not has been refused before. */
+function realisable(clock: CompleteClock) {
+  return {
+    ...clock,
+    detector: clock.detector as ClockWords['detector'],
+    interpolator: clock.interpolator as ClockWords['interpolator'],
+  };
+}
+
+/**
+ * Largest clock error that the integrator holds: Lim/(step0·2^G) with hold, an N-th of it without; no more than the
+ * counter's step itself allows, ppm. 0 for order 1, which has no integrator.
+ */
+export function largestErrorHeldPpm(words: ClockWords, samplesPerSymbol: number): number {
+  if (words.order === 1) return 0;
+  const most = words.integratorLimit === null ? 2 ** (words.integratorBits - 1) - 1 : toNumber(words.integratorLimit);
+  const lsb = most / 2 ** words.guardBits / toNumber(words.counter.nominalStep);
+  return Math.min(1, words.hold ? lsb : lsb / samplesPerSymbol) * 1e6;
+}
+
+/** Change of the symbol rate by one counter LSB, Hz. */
+function rateResolutionHz(
+  { counter, hold }: ClockWords,
+  { symbolRateBd, samplesPerSymbol }: { symbolRateBd: number; samplesPerSymbol: number },
+): number {
+  return (symbolRateBd * (hold ? samplesPerSymbol : 1)) / 2 ** counter.widthBits;
+}

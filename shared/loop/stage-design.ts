@@ -1,0 +1,116 @@
+import type { Achieved, Gains, StageDesign, StageWords } from '../model/design';
+import { analogPoles } from './analog-poles';
+import { dominantDamping } from './dominant-pair';
+import type { LinearLoop } from './linear-loop';
+import { gainCrossings, largestDelay, largestGain, margins, phaseMarginDeg } from './margins';
+import { noiseBandwidth } from './noise-bandwidth';
+import { closedLoopPoles } from './poles';
+import { closedLoopShape, emptyResponse, marginCurve, stepCurve } from './response-curves';
+import type { StageLoop, WantedLoop } from './stage-loop';
+import { stepResponse } from './step-response';
+
+export interface StageInput {
+  wanted: WantedLoop;
+  /** The unquantised loop. */
+  solved: StageLoop;
+  /** The loop that the words make. */
+  effective: LinearLoop;
+  words: StageWords;
+  /** Kd·K0: loop-normalised gain per output LSB and detector unit. */
+  perUnit: number;
+  updateRateHz: number;
+}
+
+/** What one stage does: gains, poles, margins and responses, unquantised and from its words. */
+export function stageDesign(input: StageInput): StageDesign {
+  const { wanted, solved, words } = input;
+  const { loop } = solved;
+  const achieved = achievedValues(input);
+  return {
+    name: wanted.stage.name,
+    gains: stageGains(input),
+    ...achieved,
+    bandwidthError: relativeError(achieved.noiseBandwidth),
+    dampingError: relativeError(achieved.damping),
+    margins: margins(loop),
+    effectivePhaseDeg: phaseMarginDeg(gainCrossings(input.effective), 0),
+    analogPoles: analogPoles({
+      order: loop.order,
+      damping: solved.damping ?? 1,
+      omega: 2 * solved.theta * input.updateRateHz,
+    }),
+    largestDelay: largestDelay(loop),
+    largestGain: largestGain(loop),
+    words,
+    ...responses(loop, input.updateRateHz),
+    marginAgainstDelay: marginCurve(loop),
+  };
+}
+
+function stageGains({ wanted, solved, perUnit }: StageInput): Gains {
+  const { g1, g2, g3 } = solved.loop.gains;
+  const gains = { g1, g2, proportional: g1 / perUnit, integral: g2 / perUnit };
+  return wanted.loop.order === 3 ? { ...gains, g3, integral2: g3 / perUnit } : gains;
+}
+
+function achievedValues({ wanted, solved, effective }: StageInput) {
+  const { stage, loop, symbolRateBd } = wanted;
+  const perSymbol = (value: number | null): number | null => value && value / loop.updateInterval;
+  const bandwidth = (of: LinearLoop): number | null => perSymbol(noiseBandwidth(of));
+  const exact = bandwidth(solved.loop);
+  const noise = { wanted: stage.noiseBandwidth ?? null, exact, effective: bandwidth(effective) };
+  const [pair, effectivePair] = [solved.loop, effective].map(dominantDamping);
+  const frequencyHz = (theta: number | undefined): number | null =>
+    theta === undefined
+      ? null
+      : ((loop.prewarp ? Math.atan(theta) : theta) * symbolRateBd) / (Math.PI * loop.updateInterval);
+  return {
+    stable: exact !== null,
+    noiseBandwidth: noise,
+    noiseBandwidthHz: mapAchieved(noise, (value) => value * symbolRateBd),
+    damping: { wanted: solved.damping, exact: pair?.damping ?? null, effective: effectivePair?.damping ?? null },
+    naturalFrequencyHz: {
+      wanted: stage.naturalFrequencyHz ?? null,
+      exact: frequencyHz(pair?.theta),
+      effective: frequencyHz(effectivePair?.theta),
+    },
+  };
+}
+
+function responses(loop: LinearLoop, updateRateHz: number) {
+  const poles = closedLoopPoles(loop);
+  const slowest = poles.length ? Math.hypot(...(poles[0] as [number, number])) : 1;
+  if (!(slowest < 1) || noiseBandwidth(loop) === null) return { poles, ...noResponses(loop, updateRateHz) };
+  const shape = closedLoopShape(loop, updateRateHz);
+  const step = stepResponse(loop, slowest);
+  return {
+    poles,
+    peakingDb: shape.peakingDb,
+    bandwidth3Db: shape.bandwidth3Db,
+    bandwidth3DbHz: shape.bandwidth3Db && shape.bandwidth3Db * updateRateHz,
+    settlingUpdates: step && step.settlingUpdates,
+    overshoot: step && step.overshoot,
+    phaseStep: step ? stepCurve(step) : { updates: [], phase: [] },
+    response: shape.response,
+  };
+}
+
+/** An unstable loop has no closed-loop response. */
+const noResponses = (loop: LinearLoop, updateRateHz: number) => ({
+  peakingDb: null,
+  bandwidth3Db: null,
+  bandwidth3DbHz: null,
+  settlingUpdates: null,
+  overshoot: null,
+  phaseStep: { updates: [], phase: [] },
+  response: emptyResponse(loop, updateRateHz),
+});
+
+const mapAchieved = ({ wanted, exact, effective }: Achieved, map: (value: number) => number): Achieved => ({
+  wanted: wanted === null ? null : map(wanted),
+  exact: exact === null ? null : map(exact),
+  effective: effective === null ? null : map(effective),
+});
+
+const relativeError = ({ exact, effective }: Achieved): number | null =>
+  exact === null || effective === null ? null : (effective - exact) / exact;
