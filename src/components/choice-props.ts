@@ -1,0 +1,28 @@
+/** What every row with a fixed or free text choice has in common. */
+export interface ChoiceProps {
+  number?: string;
+  label: string;
+  /** What the server says is wrong. */
+  error?: string | undefined;
+  note?: string | undefined;
+  disabled?: boolean;
+  /** Name of the last revision; set, the row compares with `was`. */
+  wasName?: string | undefined;
+  inputId?: string | undefined;
+}
+
+export interface Option<T> {
+  value: T;
+  label: string;
+  disabled?: boolean;
+}
+
+/** "was saturate in r14", undefined while nothing is edited. */
+export function wasSentence<T>(
+  now: T | undefined,
+  { was, wasName }: { was?: T | undefined; wasName?: string | undefined },
+  nameOf: (value: T) => string,
+): string | undefined {
+  if (wasName === undefined || now === was) return undefined;
+  return `was ${was === undefined || was === '' ? 'empty' : nameOf(was)} in ${wasName}`;
+}
