@@ -1,0 +1,248 @@
+import type { CarrierWords, ClockWords, OverflowByNode, StageGainWords } from '../model/words';
+import { ParameterError, requirePositive } from '../parameter-error';
+import { exactRatio, floorOf, nearestOf, product, quotient, type Ratio } from './exact-ratio';
+import { toStored, wrapUnsigned } from './format';
+import { gainWord, type GainForm } from './gain-words';
+import { carrierOscillatorGain, clockOscillatorGain, errorLsb } from './loop-scale';
+import type { Rounding } from './rounding';
+import { symmetry, type Modulation } from './symmetry';
+
+export type { CarrierWords, ClockWords, Words } from '../model/words';
+
+/** One stage as the loop engine gives it. */
+export interface WantedStage {
+  /** Loop-normalised gains Kd·K0·Kp, Kd·K0·Ki, Kd·K0·Kii per update, 0 where the order has none. */
+  g1: number;
+  g2?: number;
+  g3?: number;
+  /** Symbols after which the next stage is loaded; null: not by count. */
+  untilSymbols: number | null;
+  /** Lock metric 0 … 1 at which the next stage is loaded; null: not by the lock detector. */
+  lockThreshold: number | null;
+}
+
+export interface WordSignal {
+  modulation: Modulation | Uppercase<Modulation>;
+  ringRatios?: number[];
+  symbolRateBd: number;
+  samplesPerSymbol: number;
+  amplitude: number;
+  sampleBits: number;
+  sampleFullScaleLog2: number;
+}
+
+export interface WordArithmetic {
+  errorBits: number;
+  errorFullScaleLog2: number;
+  gainForm: GainForm;
+  mantissaBits: number;
+  integratorBits: number;
+  guardBits: number;
+  integrator2Bits: number;
+  guard2Bits: number;
+  rounding: Rounding;
+  overflow: OverflowByNode['sample'] | Partial<OverflowByNode>;
+}
+
+/** What both loops have in common, all of it filled in. */
+export interface WordLoop {
+  order: 1 | 2 | 3;
+  /** Symbols between updates: a whole number, or 1/m. */
+  updateInterval: number;
+  /** Extra pipeline delay, updates. */
+  delay: number;
+  polarity: 1 | -1;
+  arithmetic: WordArithmetic;
+  lockDetector: { averagingSymbols: number };
+}
+
+export interface CarrierWordsInput {
+  signal: WordSignal;
+  carrier: WordLoop & {
+    detector: CarrierWords['detector'];
+    nco: { widthBits: number; phaseBits: number; tableBits: number; stepsPerSymbol: number; centreHz: number };
+    arithmetic: { integratorLimitHz?: number };
+  };
+  /** Slope Kd at lock, detector units per radian, U symbols counted together when U > 1. */
+  detectorGain: number;
+  stages: readonly WantedStage[];
+}
+
+export interface ClockWordsInput {
+  signal: WordSignal;
+  clock: WordLoop & {
+    detector: ClockWords['detector'];
+    interpolator: ClockWords['interpolator'];
+    hold: boolean;
+    counter: { widthBits: number; fractionBits: number; tableBits: number };
+    arithmetic: { integratorLimitPpm?: number };
+  };
+  /** Slope Kd at lock, detector units per symbol period, U symbols counted together when U > 1. */
+  detectorGain: number;
+  stages: readonly WantedStage[];
+}
+
+/**
+ * The integers of a carrier loop. A real gain in output LSB per error LSB is g/(Kd·K0) times one error LSB, and
+ * times 2^G (2^(G+H)) for the integrators; each takes the nearest gain that the hardware can hold.
+ *
+ * @throws {ParameterError} with a pointer into the plan for what the datapath cannot hold
+ */
+export function carrierWords({ signal, carrier, detectorGain, stages }: CarrierWordsInput): CarrierWords {
+  const { nco, detector } = carrier;
+  requirePositive({ detectorGain });
+  const shared = commonWords('/carrier', signal, carrier);
+  if (nco.stepsPerSymbol % shared.updatesPerSymbol !== 0) {
+    throw new ParameterError('/carrier/nco/stepsPerSymbol', 'the NCO steps must be a multiple of the updates per symbol');
+  }
+  if (nco.phaseBits > nco.widthBits) {
+    throw new ParameterError('/carrier/nco/phaseBits', 'the phase cannot have more bits than the NCO');
+  }
+  const clockHz = product(exactRatio(nco.stepsPerSymbol), exactRatio(signal.symbolRateBd));
+  const perUnit = carrierOscillatorGain({ ...shared, nco }) * detectorGain;
+  return {
+    loop: 'carrier',
+    ...detectorWords(detector, signal),
+    ...shared,
+    tableBits: nco.tableBits,
+    integratorLimit: integratorLimit(carrier, hertzLimit(carrier, clockHz)),
+    stages: stages.map((stage) => stageWords(stage, carrier, perUnit)),
+    nco: {
+      widthBits: nco.widthBits,
+      phaseBits: nco.phaseBits,
+      stepsPerSymbol: nco.stepsPerSymbol,
+      fcw: toStored(frequencyWord(exactRatio(nco.centreHz), clockHz, nco.widthBits)),
+    },
+  };
+}
+
+/**
+ * The integers of a clock loop; the counter takes the place of the NCO.
+ *
+ * @throws {ParameterError} with a pointer into the plan for what the datapath cannot hold
+ */
+export function clockWords({ signal, clock, detectorGain, stages }: ClockWordsInput): ClockWords {
+  const { counter } = clock;
+  requirePositive({ detectorGain });
+  const shared = commonWords('/clock', signal, clock);
+  if (shared.updatesPerSymbol > 1) {
+    throw new ParameterError('/clock/updateInterval', 'a clock loop updates at most once a symbol');
+  }
+  const samples = exactRatio(signal.samplesPerSymbol);
+  const step = nearestOf(quotient(exactRatio(2 ** counter.widthBits), samples));
+  const scale = { ...shared, counter, hold: clock.hold };
+  return {
+    loop: 'clock',
+    detector: clock.detector,
+    interpolator: clock.interpolator,
+    hold: clock.hold,
+    ...shared,
+    tableBits: counter.tableBits,
+    integratorLimit: integratorLimit(clock, ppmLimit(clock, step, samples)),
+    stages: stages.map((stage) =>
+      stageWords(stage, clock, clockOscillatorGain(scale, signal.samplesPerSymbol) * detectorGain),
+    ),
+    counter: { widthBits: counter.widthBits, fractionBits: counter.fractionBits, nominalStep: toStored(step) },
+  };
+}
+
+/** Frequency control word f0·2^W/fn to nearest, a half up, modulo 2^W. */
+export const frequencyWord = (frequencyHz: Ratio, clockHz: Ratio, widthBits: number): bigint =>
+  wrapUnsigned(nearestOf(quotient(product(frequencyHz, exactRatio(2 ** widthBits)), clockHz)), widthBits);
+
+function commonWords(pointer: string, signal: WordSignal, loop: WordLoop) {
+  const { arithmetic } = loop;
+  requireGuard(`${pointer}/arithmetic/guardBits`, arithmetic.guardBits, arithmetic.integratorBits);
+  requireGuard(`${pointer}/arithmetic/guard2Bits`, arithmetic.guard2Bits, arithmetic.integrator2Bits);
+  return {
+    rounding: arithmetic.rounding,
+    overflow: overflowByNode(arithmetic.overflow),
+    sampleBits: signal.sampleBits,
+    sampleFullScaleLog2: signal.sampleFullScaleLog2,
+    errorBits: arithmetic.errorBits,
+    errorFullScaleLog2: arithmetic.errorFullScaleLog2,
+    ...updateRate(`${pointer}/updateInterval`, loop.updateInterval),
+    delay: loop.delay,
+    order: loop.order,
+    integratorBits: arithmetic.integratorBits,
+    guardBits: arithmetic.guardBits,
+    integrator2Bits: arithmetic.integrator2Bits,
+    guard2Bits: arithmetic.guard2Bits,
+    lock: { averagingSymbols: loop.lockDetector.averagingSymbols, ...symmetry(lowerCase(signal.modulation)) },
+  };
+}
+
+function requireGuard(pointer: string, guardBits: number, widthBits: number): void {
+  if (guardBits < widthBits) return;
+  throw new ParameterError(pointer, `the guard bits must be fewer than the ${widthBits} bits of their integrator`);
+}
+
+function detectorWords(detector: CarrierWords['detector'], signal: WordSignal) {
+  const modulation = lowerCase(signal.modulation);
+  if (detector === 'power-law') {
+    const { power, sign } = symmetry(modulation);
+    return { detector, power, powerSign: sign };
+  }
+  if (detector === 'costas' || detector === 'sign') return { detector, modulation };
+  const rings = signal.ringRatios && modulation.endsWith('apsk') ? { ringRatios: signal.ringRatios } : {};
+  return { detector, modulation, amplitude: signal.amplitude, ...rings };
+}
+
+const lowerCase = (modulation: WordSignal['modulation']): Modulation => modulation.toLowerCase() as Modulation;
+
+function updateRate(pointer: string, interval: number): { symbolsPerUpdate: number; updatesPerSymbol: number } {
+  if (Number.isInteger(interval) && interval >= 1) return { symbolsPerUpdate: interval, updatesPerSymbol: 1 };
+  const updates = Math.round(1 / interval);
+  if (interval > 0 && interval < 1 && Math.abs(updates * interval - 1) < 1e-6) {
+    return { symbolsPerUpdate: 1, updatesPerSymbol: updates };
+  }
+  throw new ParameterError(pointer, 'the update interval must be a whole number of symbols or 1/m');
+}
+
+function overflowByNode(overflow: WordArithmetic['overflow']): OverflowByNode {
+  const given: Partial<OverflowByNode> = typeof overflow === 'string' ? {} : overflow;
+  const word = typeof overflow === 'string' ? overflow : 'saturate';
+  return {
+    sample: given.sample ?? word,
+    error: given.error ?? word,
+    proportional: given.proportional ?? word,
+    increment: given.increment ?? word,
+    integrator: given.integrator ?? word,
+    increment2: given.increment2 ?? word,
+    integrator2: given.integrator2 ?? word,
+  };
+}
+
+function stageWords(stage: WantedStage, { arithmetic, polarity }: WordLoop, perUnit: number): StageGainWords {
+  const { gainForm: form, mantissaBits, guardBits, guard2Bits } = arithmetic;
+  const perError = (polarity * errorLsb(arithmetic)) / perUnit;
+  const word = (g: number, guard: number) => gainWord({ gain: g * perError * 2 ** guard, form, mantissaBits });
+  return {
+    proportional: word(stage.g1, 0),
+    integral: word(stage.g2 ?? 0, guardBits),
+    integral2: word(stage.g3 ?? 0, guardBits + guard2Bits),
+    untilSymbols: stage.untilSymbols,
+    lockThreshold: stage.lockThreshold === null ? null : Math.floor(256 * stage.lockThreshold),
+  };
+}
+
+/** Lim = ⌊integratorLimitHz·2^(Wn+G)/fn⌋. */
+function hertzLimit({ nco, arithmetic }: CarrierWordsInput['carrier'], clockHz: Ratio): bigint | undefined {
+  if (arithmetic.integratorLimitHz === undefined) return undefined;
+  const scale = exactRatio(2 ** (nco.widthBits + arithmetic.guardBits));
+  return floorOf(quotient(product(exactRatio(arithmetic.integratorLimitHz), scale), clockHz));
+}
+
+/** Lim = ⌊integratorLimitPpm·10^−6·step0·2^G⌋ with hold, samplesPerSymbol times that without. */
+function ppmLimit({ hold, arithmetic }: ClockWordsInput['clock'], step: bigint, samples: Ratio): bigint | undefined {
+  if (arithmetic.integratorLimitPpm === undefined) return undefined;
+  const steps = { numerator: step << BigInt(arithmetic.guardBits), denominator: 1_000_000n };
+  const limit = product(exactRatio(arithmetic.integratorLimitPpm), steps);
+  return floorOf(hold ? limit : product(limit, samples));
+}
+
+function integratorLimit({ arithmetic }: WordLoop, limit: bigint | undefined) {
+  if (limit === undefined) return null;
+  const most = (1n << BigInt(arithmetic.integratorBits - 1)) - 1n;
+  return toStored(limit < most ? limit : most);
+}
