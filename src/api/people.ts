@@ -3,6 +3,8 @@ import { everyPage, page, type Page } from './pages';
 import type { PersonName } from './plans';
 import type { Role } from './token';
 
+export type { Role } from './token';
+
 export interface Person {
   id: number;
   email: string;

@@ -1,0 +1,55 @@
+import { numberText } from '../../../shared/quantities/format';
+import type { ReplayTrace } from '../../api/replays';
+import type { OffsetScale } from './offset-scale';
+
+/** Three strips over the same symbols: what the loop holds, how far off it is, what the NCO is told. */
+export function traceFigures(trace: ReplayTrace, offsetHz: number, scale: OffsetScale) {
+  const x = { label: 'symbols', unit: 'symbols', domain: [0, trace.symbols] as [number, number] };
+  const limits = eventsOf(trace);
+  const strip = (title: string, values: readonly number[], tone: 'track' | 'ink', ticks?: number[]) => ({
+    title,
+    x,
+    y: { label: title, ...(ticks && { ticks }) },
+    height: 112,
+    series: [
+      {
+        label: title,
+        tone,
+        thin: true,
+        quiet: true,
+        points: values.map((value, at) => [trace.symbol[at] ?? 0, value] as const),
+      },
+    ],
+    limits,
+  });
+  const inUnit = (values: readonly number[]) => values.map((hertz) => scale.of(hertz));
+  const applied = offsetHz === 0 ? undefined : [0, scale.of(offsetHz)];
+  return [
+    strip(`Integrator, ${scale.unit}`, inUnit(trace.integratorHz), 'track', applied),
+    strip('Phase error, °', trace.phaseErrorDeg, 'ink'),
+    strip(`NCO word, ${scale.unit}`, inUnit(trace.frequencyHz), 'ink', applied),
+  ];
+}
+
+function eventsOf(trace: ReplayTrace) {
+  const locked = trace.lockedAtSymbol;
+  const switches = trace.stage.flatMap((stage, at) =>
+    at > 0 && stage !== trace.stage[at - 1] ? [trace.symbol[at] ?? 0] : [],
+  );
+  return [
+    ...(locked === null
+      ? []
+      : [{ at: locked, label: `locked at ${numberText(locked)}`, tone: 'soft' as const, axis: 'x' as const }]),
+    ...switches.map((at) => ({ at, label: 'stage switch', tone: 'soft' as const, axis: 'x' as const })),
+  ];
+}
+
+/** What became of a trial, in one sentence. */
+export function traceSentence({ outcome, lockedAtSymbol, symbols }: ReplayTrace): string {
+  const of = `${numberText(symbols)} symbols`;
+  if (outcome === 'locked')
+    return `Locked at symbol ${numberText(lockedAtSymbol ?? 0)} of ${of}, and it holds to the end.`;
+  if (outcome === 'false-lock')
+    return `The error is quiet at the end of ${of}, but the frequency is wrong: false lock.`;
+  return `Not locked within ${of}.`;
+}
