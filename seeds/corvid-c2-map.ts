@@ -14,7 +14,7 @@ const registerMap: RegisterMap = {
         bound('polarity', [12, 12], 'carrier.polarity'),
         bound('detector', [10, 8], 'carrier.detector', { reset: 1 }),
         bound('rounding', [5, 4], 'carrier.rounding'),
-        { name: 'update', high: 1, low: 1, constant: 1, reset: 1 },
+        { name: 'nco_enable', high: 1, low: 1, constant: 1, reset: 1 },
         { name: 'enable', high: 0, low: 0, constant: 1, reset: 1 },
       ],
     },

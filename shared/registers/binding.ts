@@ -1,6 +1,6 @@
 import type { Finding } from '../model/design';
 import type { Field, Register, RegisterMap } from '../model/register-map';
-import { fieldRange, fieldWidth, fitsField, rawBits, withField } from './bits';
+import { fieldRange, fieldWidth, fitsField, integerText, rawBits, withField } from './bits';
 import { bySeverity, mapFinding } from './map-finding';
 import type { QuantityValue } from './quantities';
 
@@ -42,7 +42,7 @@ function fitFault(value: bigint, field: Field, parts: readonly Field[]): string 
   if (lost) return `no field holds the ${low} bits below`;
   if (fitsField(held, field) || parts.some((part) => lowOf(part) === top)) return undefined;
   const { least, most } = fieldRange(field);
-  return `it holds ${least} to ${most}`;
+  return `it holds ${integerText(least)} to ${integerText(most)}`;
 }
 
 /** Integer of an enumerated quantity in the hardware's own table, where the field has one. */
@@ -95,7 +95,7 @@ function rangeFinding(register: Register, { field, quantity, fault }: FieldValue
     mapFinding({
       slug: 'register.range',
       title: 'A word does not fit its field',
-      reason: `${quantity.path} is ${quantity.choice ?? quantity.value.toString().replace('-', '−')} and goes into ${register.name}.${field.name}; ${fault}.`,
+      reason: `${quantity.path} is ${quantity.choice ?? integerText(quantity.value)} and goes into ${register.name}.${field.name}; ${fault}.`,
       remedy: 'Widen the field in the map of the target, or make the word smaller in the plan.',
       fields: [quantity.planPointer],
     }),

@@ -44,3 +44,6 @@ export const hexText = (word: number | bigint, bits: number): string =>
     .toString(16)
     .toUpperCase()
     .padStart(Math.ceil(bits / 4), '0')}`;
+
+/** An integer as a sentence shows it, with a real minus sign. */
+export const integerText = (value: bigint | number): string => String(value).replace('-', '−');

@@ -8,7 +8,20 @@ export const registerMacros: readonly RegisterMacro[] = ['OFFSET', 'ADDR', 'RESE
 export const fieldMacros: readonly FieldMacro[] = ['SHIFT', 'WIDTH', 'MASK', 'VALUE'];
 
 /** Names that the header defines whatever the map holds. */
-export const fixedNames = ['BASE_ADDRESS', 'WORD_BITS', 'MAP_VERSION', 'ENGINE', 'DIGEST', 'REVISION', 'CONFIG_H'];
+export const fixedNames = [
+  'BASE_ADDRESS',
+  'REGISTER_BITS',
+  'MAP_VERSION',
+  'ENGINE',
+  'PLAN',
+  'REVISION',
+  'RELEASE',
+  'DIGEST',
+  'WRITE_COUNT',
+  'ASSERT',
+  'ASSERT_FIELD',
+  'ONES',
+];
 
 /** Names of the words begin so; a register's may not. */
 export const wordPrefix = 'WORD_';
@@ -16,8 +29,11 @@ export const wordPrefix = 'WORD_';
 export const registerName = ({ name }: Pick<Register, 'name'>, macro: RegisterMacro): string =>
   `${name.toUpperCase()}_${macro}`;
 
-export const fieldName = (register: Pick<Register, 'name'>, { name }: Pick<Field, 'name'>, macro: FieldMacro): string =>
-  `${register.name.toUpperCase()}_${name.toUpperCase()}_${macro}`;
+/** Macro of a field; without a kind, the stem that its macros share. */
+export function fieldName(register: Pick<Register, 'name'>, { name }: Pick<Field, 'name'>, macro?: FieldMacro): string {
+  const stem = `${register.name}_${name}`.toUpperCase();
+  return macro === undefined ? stem : `${stem}_${macro}`;
+}
 
 /** Macro of a quantity: `carrier.track.untilSymbols` gives `WORD_CARRIER_TRACK_UNTIL_SYMBOLS`. */
 export const wordName = (path: string): string =>

@@ -1,6 +1,6 @@
 import type { Finding } from '../model/design';
 import type { Field, Register } from '../model/register-map';
-import { fieldRange, fieldWidth, fitsField, rangeText } from './bits';
+import { fieldRange, fieldWidth, fitsField, integerText, rangeText } from './bits';
 import { mapFinding } from './map-finding';
 import { quantityAt } from './quantities';
 
@@ -24,7 +24,7 @@ export function rangeFault(placed: PlacedField, wordBits: number): Finding[] {
     mapFinding({
       slug: 'map.range',
       title: swapped ? 'Its high bit is below its low bit' : 'Its bits lie outside the register',
-      reason: `${nameOf(placed)} is [${field.high}:${field.low}]; a register has bits ${wordBits - 1} to 0.`,
+      reason: `${nameOf(placed)} is [${integerText(field.high)}:${integerText(field.low)}]; a register has bits ${wordBits - 1} to 0.`,
       fields: [`${pointer}/high`, `${pointer}/low`],
     }),
   ];
@@ -39,7 +39,7 @@ function valueFault(placed: PlacedField, key: 'constant' | 'reset'): Finding[] {
     mapFinding({
       slug: `map.${key}`,
       title: `Its ${key === 'reset' ? 'reset value' : 'constant'} does not fit`,
-      reason: `${nameOf(placed)} takes ${least} to ${most} in ${fieldWidth(field)} bits ${field.coding ?? 'unsigned'}, not ${value}.`,
+      reason: `${nameOf(placed)} takes ${integerText(least)} to ${integerText(most)} in ${fieldWidth(field)} bits ${field.coding ?? 'unsigned'}, not ${integerText(value)}.`,
       fields: [`${pointer}/${key}`],
     }),
   ];

@@ -1,4 +1,6 @@
 import { toNumber } from '../fixed-point/format';
+import { gainOf } from '../fixed-point/gain-words';
+import { errorLsb } from '../fixed-point/loop-scale';
 import type { CarrierWords, ClockWords, SignedGainWord } from '../model/words';
 import type { LoopSource } from './quantity';
 
@@ -13,19 +15,32 @@ export function percent(ratio: number): string {
   return `${ratio > 0 ? '+' : ''}${text} %`;
 }
 
-/** Output LSB per error LSB that a gain word makes: M·2^−s. */
-export const gainOfWord = ({ mantissa, shift }: SignedGainWord): number => mantissa * 2 ** -shift;
+/** The gains of a stage, and by how many guard bits the LSB of each lies below one output LSB. */
+export type Gain = 'proportional' | 'integral' | 'integral2';
+
+function guardOf(gain: Gain, { guardBits, guard2Bits }: LoopSource['words']): number {
+  if (gain === 'proportional') return 0;
+  return gain === 'integral' ? guardBits : guardBits + guard2Bits;
+}
+
+/** Gain that a word makes in output LSB per error LSB: M·2^−s, below it the guard bits of its integrator. */
+export const gainOfWord = (word: SignedGainWord, gain: Gain, words: LoopSource['words']): number =>
+  gainOf(word) * 2 ** -guardOf(gain, words);
 
 /**
- * Relative error of a gain word against the wanted gain.
+ * Relative error of the magnitude of a gain word.
  *
  * @param wanted gain in output LSB per detector unit
  * @returns null where the plan wants no such gain
  */
-export function gainError(word: SignedGainWord, wanted: number | undefined, words: LoopSource['words']): number | null {
+export function gainError(
+  word: SignedGainWord,
+  gain: Gain,
+  wanted: number | undefined,
+  words: LoopSource['words'],
+): number | null {
   if (!wanted) return null;
-  const detectorUnitsPerErrorLsb = 2 ** (words.errorFullScaleLog2 - (words.errorBits - 1));
-  return Math.abs(gainOfWord(word)) / Math.abs(wanted * detectorUnitsPerErrorLsb) - 1;
+  return Math.abs(gainOfWord(word, gain, words)) / Math.abs(wanted * errorLsb(words)) - 1;
 }
 
 /** Clock of the NCO in Hz: steps per symbol times the symbol rate. */

@@ -1,13 +1,11 @@
 import type { SignedGainWord, StageGainWords } from '../model/words';
-import { gainError, gainOfWord, percent, shortNumber } from './meaning';
+import { type Gain, gainError, gainOfWord, percent, shortNumber } from './meaning';
 import type { Definition, LoopSource } from './quantity';
 
 /** One stage of a loop: its place in the order of running. */
 export interface StageSource extends LoopSource {
   index: number;
 }
-
-type Gain = 'proportional' | 'integral' | 'integral2';
 
 const wordsOf = ({ words, index }: StageSource): StageGainWords => words.stages[index] as StageGainWords;
 
@@ -20,8 +18,8 @@ const title: Record<Gain, string> = {
 const leastOrder: Record<Gain, number> = { proportional: 1, integral: 2, integral2: 3 };
 
 function gainText(source: StageSource, gain: Gain, word: SignedGainWord): string {
-  const error = gainError(word, source.loop.stages[source.index]?.gains[gain], source.words);
-  const text = `${shortNumber(gainOfWord(word))} output LSB per error LSB`;
+  const error = gainError(word, gain, source.loop.stages[source.index]?.gains[gain], source.words);
+  const text = `${shortNumber(gainOfWord(word, gain, source.words))} output LSB per error LSB`;
   return error === null ? text : `${text}, ${percent(error)} from the wanted gain`;
 }
 

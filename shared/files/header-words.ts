@@ -1,0 +1,75 @@
+import type { Achieved, LoopDesign, StageDesign } from '../model/design';
+import { wordName } from '../registers/c-names';
+import { percent, shortNumber } from '../registers/meaning';
+import { stageOf, type LoopName, type QuantityValue } from '../registers/quantities';
+import { cText } from './c-text';
+import { decimalConstant, defineBlock } from './c-constant';
+import type { FileInput } from './file-input';
+import { comment } from './header-head';
+
+const shown = (value: number | null): string => (value === null ? 'none' : shortNumber(value));
+
+function achieved(label: string, { wanted, exact, effective }: Achieved, error: number | null, unit = ''): string {
+  const behind = unit === '' ? '' : ` ${unit}`;
+  const from = error === null ? '' : ` (${percent(error)})`;
+  return `  ${label}: ${shown(wanted)} wanted, ${shown(exact)} exact, ${shown(effective)} from these words${from}${behind}`;
+}
+
+const loopTitle = { carrier: 'Carrier loop', clock: 'Clock loop' } as const;
+
+const stageComment = (loop: LoopName, stage: StageDesign): string[] =>
+  comment([
+    `${loopTitle[loop]}, stage ${stage.name}`,
+    achieved('BnT, cycles per symbol', stage.noiseBandwidth, stage.bandwidthError),
+    achieved('Bn, Hz', stage.noiseBandwidthHz, null),
+    achieved('zeta', stage.damping, stage.dampingError),
+    achieved('Natural frequency, Hz', stage.naturalFrequencyHz, null),
+    `  Phase margin, deg: ${shown(stage.margins.phaseDeg)} exact, ${shown(stage.effectivePhaseDeg)} from these words`,
+  ]);
+
+const loopComment = (loop: LoopName, { updateRateHz, detector }: LoopDesign): string[] =>
+  comment([
+    loopTitle[loop],
+    `  Updates per second: ${shortNumber(updateRateHz)}`,
+    `  Detector gain Kd: ${shortNumber(detector.gain)} detector units per ${loop === 'carrier' ? 'rad' : 'symbol'}`,
+  ]);
+
+function wordMacros(prefix: string, quantities: readonly QuantityValue[]): string[] {
+  return defineBlock(
+    quantities.map(({ path, value, signed, label, meaning }) => ({
+      name: prefix + wordName(path),
+      value: decimalConstant(value, signed),
+      comment: cText(meaning === '' ? label : meaning),
+    })),
+  );
+}
+
+function loopLines(
+  loop: LoopName,
+  design: LoopDesign | undefined,
+  quantities: QuantityValue[],
+  prefix: string,
+): string[] {
+  if (!design) return [];
+  const own = quantities.filter(({ path }) => path.startsWith(`${loop}.`));
+  const stages = design.stages.flatMap((stage) => [
+    ...stageComment(loop, stage),
+    ...wordMacros(
+      prefix,
+      own.filter(({ path }) => path.startsWith(`${loop}.${stage.name}.`) && stageOf(path) === stage.name),
+    ),
+    '',
+  ]);
+  const rest = own.filter(({ path }) => stageOf(path) === undefined);
+  return [...stages, ...loopComment(loop, design), ...wordMacros(prefix, rest), ''];
+}
+
+/** Every word of the plan as a macro, whether or not a register holds it, with what it means. */
+export function words({ design, target }: FileInput, quantities: QuantityValue[]): string[] {
+  return [
+    '/* Words of the plan. A choice is given by its standard code; a register may use another. */',
+    '',
+    ...loopLines('carrier', design.carrier, quantities, target.cPrefix),
+    ...loopLines('clock', design.clock, quantities, target.cPrefix),
+  ];
+}
