@@ -1,0 +1,3 @@
+export const roles = ['engineer', 'tester', 'release', 'viewer', 'admin'] as const;
+
+export type Role = (typeof roles)[number];

@@ -1,0 +1,45 @@
+import type { Request, RequestHandler, Response } from 'express';
+import { roles, type Role } from '../roles';
+import type { SchemaName } from '../schemas';
+
+/** Who may call a route: anyone, signed in or not, or the people of these roles. */
+export type Allowed = 'open' | readonly Role[];
+
+export const everyone: readonly Role[] = roles;
+
+/** An answer or a body in the words of the API description. */
+export interface Content {
+  media: string;
+  /** Schema of JSON; absent for text. */
+  schema?: SchemaName;
+}
+
+/** One route of the API: all that mounting, describing and testing it needs. */
+export interface Route {
+  method: 'get' | 'post' | 'put' | 'patch' | 'delete';
+  /** Below /api/v1, as Express writes it. */
+  path: string;
+  allowed: Allowed;
+  /** One line for the API description. */
+  summary: string;
+  /** Schema of the body; absent: the body is not read. */
+  body?: SchemaName;
+  /** Key of the body that faults point into. */
+  faultsWithin?: string;
+  /** Handlers between the check of roles and the route's own, where validateBody is not enough. */
+  before?: RequestHandler[];
+  query?: readonly string[];
+  /** Needs the If-Match header. */
+  ifMatch?: boolean;
+  /** Status of success; 200 when absent. */
+  status?: 201 | 202 | 204;
+  /** Media type of success; JSON when absent. */
+  answers?: string;
+  handle: (req: Request, res: Response) => Promise<void> | void;
+}
+
+/** The version of what is sent, for the If-Match of its next change. */
+export const tagged = (res: Response, version: number): Response => res.set('ETag', `"${version}"`);
+
+/** Parameters of a list that comes in pages. */
+export const paging = ['cursor', 'limit'] as const;
