@@ -76,7 +76,15 @@ export interface PlanSummary {
 }
 
 /** A plan that need not be whole yet: any key of a plan description may be absent. */
-export type DraftPlan = Partial<Omit<Plan, 'signal'>> & { signal?: Partial<Plan['signal']> };
+export interface DraftPlan {
+  name?: string;
+  target?: string;
+  signal?: Partial<Plan['signal']>;
+  carrier?: Plan['carrier'];
+  clock?: Plan['clock'];
+  environment?: Plan['environment'];
+  limits?: Plan['limits'];
+}
 
 /** What one person has typed since a revision. */
 export interface Draft {

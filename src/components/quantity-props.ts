@@ -5,12 +5,12 @@ import type { Unit } from '../../shared/quantities/units';
 export interface QuantityProps {
   /** In the unit; a fraction when the unit is %. Undefined while the field is empty. */
   modelValue?: number | undefined;
-  unit?: Unit;
+  unit?: Unit | undefined;
   /** Lets 20 kHz be typed in a ppm or BnT field, and ppm in a field of Hz. */
   reference?: Reference | undefined;
   /** Both signs are meant: ±. */
-  symmetric?: boolean;
-  integer?: boolean;
+  symmetric?: boolean | undefined;
+  integer?: boolean | undefined;
   /** Fewest digits behind the point. */
   decimals?: number | undefined;
   /** Most digits shown; the value keeps all it has. */
@@ -20,8 +20,8 @@ export interface QuantityProps {
   /** Text that could not be read when the form was last left: the field opens with it instead of its value. */
   typed?: string | undefined;
   /** May stay empty. */
-  optional?: boolean;
-  disabled?: boolean;
+  optional?: boolean | undefined;
+  disabled?: boolean | undefined;
   /** What the last revision holds; compared only when `wasName` is set. */
   was?: number | undefined;
   /** Name of the last revision: r14. */

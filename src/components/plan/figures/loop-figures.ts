@@ -1,0 +1,36 @@
+import type { Design } from '../../../../shared/model/design';
+import { settled } from '../../../../shared/plan/changes';
+import type { Figure } from './figure';
+import { jitterFigure } from './jitter-figure';
+import { marginFigure } from './margin-figure';
+import { poleFigure } from './pole-figure';
+import { responseFigure } from './response-figure';
+import { sCurveFigure, type LoopKind } from './s-curve-figure';
+import { stepFigure } from './step-figure';
+
+export interface NumberedFigure extends Figure {
+  figure: number;
+}
+
+/**
+ * The six figures of one loop. A figure that the engine cannot fill yet leaves its number free, so that “Fig. 5” is
+ * the same figure on every sheet.
+ */
+export function loopFigures(design: Design, kind: LoopKind): NumberedFigure[] {
+  const loop = design[kind];
+  if (!loop) return [];
+  const read = (pointer: string): number => settled(design.plan, pointer) as number;
+  const limits = {
+    phaseJitterDeg: read('/limits/phaseJitterDeg'),
+    timingJitterSymbols: read('/limits/timingJitterSymbols'),
+  };
+  const figures = [
+    stepFigure(loop),
+    responseFigure(loop),
+    poleFigure(loop),
+    sCurveFigure(loop, kind, read('/signal/esN0Db')),
+    jitterFigure(loop, limits),
+    marginFigure(loop, read(`/${kind}/delay`), read('/limits/phaseMarginDeg')),
+  ];
+  return figures.flatMap((figure, index) => (figure ? [{ ...figure, figure: index + 1 }] : []));
+}

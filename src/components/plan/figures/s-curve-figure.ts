@@ -1,0 +1,59 @@
+import type { Detector, LoopDesign } from '../../../../shared/model/design';
+import { numberText } from '../../../../shared/quantities/format';
+import { pointsOf, type Figure, type Point } from './figure';
+import type { Series } from '../../plot/plot-model';
+
+export type LoopKind = 'carrier' | 'clock';
+
+const degrees = 180 / Math.PI;
+
+/** Fig. 4: the mean error against the true one, without noise and at the operating point, with the slope at lock. */
+export function sCurveFigure({ detector }: LoopDesign, kind: LoopKind, esN0Db: number): Figure {
+  const scale = kind === 'carrier' ? degrees : 1;
+  const half = (detector.period / 2) * scale;
+  return {
+    title: 'S-curve, detector units',
+    file: 's-curve',
+    x: {
+      label: kind === 'carrier' ? 'phase error' : 'timing error',
+      unit: kind === 'carrier' ? '°' : 'symbols',
+      domain: [-half, half],
+      ticks: [-half, -half / 2, 0, half / 2, half],
+    },
+    y: { label: 'error' },
+    series: [...curves(detector, scale, esN0Db), slope(detector, scale)],
+    caption: captionOf(detector, kind, scale),
+  };
+}
+
+function curves({ curve, variance }: Detector, scale: number, esN0Db: number): Series[] {
+  const x = curve.x.map((at) => at * scale);
+  const noisy = pointsOf(x, curve.noisy);
+  const sigma = Math.sqrt(variance ?? 0);
+  const area =
+    variance === null ? [] : noisy.map(([at, mean]): [number, number, number] => [at, mean - sigma, mean + sigma]);
+  return [
+    { label: 'no noise', tone: 'soft', dash: true, thin: true, points: pointsOf(x, curve.noiseless) },
+    { label: `${numberText(esN0Db)} dB`, tone: 'track', points: noisy, ...(area.length > 0 && { area }) },
+  ];
+}
+
+/** The tangent at lock, over the middle of the period. */
+function slope({ gain, period }: Detector, scale: number): Series {
+  const reach = period / 6;
+  const points: Point[] = [
+    [-reach * scale, -reach * gain],
+    [reach * scale, reach * gain],
+  ];
+  return { label: `slope ${numberText(gain, { decimals: 3 })}`, tone: 'ink', thin: true, points };
+}
+
+function captionOf(detector: Detector, kind: LoopKind, scale: number): string {
+  const { gain, gainWithoutNoise, period, variance } = detector;
+  const [before, after] = [gainWithoutNoise, gain].map((value) => numberText(value, { decimals: 3 }));
+  const every =
+    kind === 'carrier' ? `${numberText(period * scale, { significant: 4 })}°` : `${numberText(period)} symbol`;
+  const change =
+    before === after ? `The slope at lock is ${after}` : `Noise takes the slope from ${before} to ${after}`;
+  return `${change}; stable nulls every ${every}.${variance === null ? '' : ' The band is ±1σ of one update.'}`;
+}

@@ -1,0 +1,149 @@
+import type { LoopDesign, StageDesign } from '../../../shared/model/design';
+
+/** A number in a cell and how many digits it earns. */
+export interface GainCell {
+  value: number | null;
+  decimals?: number;
+  significant?: number;
+  exponent?: boolean;
+  sign?: boolean;
+}
+
+export interface GainWordCell {
+  mantissa: number;
+  shift: number;
+}
+
+export interface GainRow {
+  label: string;
+  unit: string;
+  /** One cell for each stage. */
+  cells: (GainCell | GainWordCell)[];
+}
+
+export interface GainGroup {
+  title: string;
+  rows: GainRow[];
+}
+
+const prefixes: [number, string][] = [
+  [1e9, 'GHz'],
+  [1e6, 'MHz'],
+  [1e3, 'kHz'],
+  [1, 'Hz'],
+  [1e-3, 'mHz'],
+];
+
+/** Everything that a design says of a loop's stages: asked for, reached, gains, words. */
+export function gainGroups(loop: LoopDesign): GainGroup[] {
+  const { stages } = loop;
+  return [
+    { title: 'Asked for', rows: askedRows(stages) },
+    { title: 'What the loop does, delay included', rows: reachedRows(stages) },
+    { title: 'Gains of the loop', rows: loopGainRows(stages) },
+    { title: 'Gains, per detector unit', rows: detectorGainRows(stages, loop.detector.gain) },
+    { title: 'Words', rows: wordRows(stages) },
+  ];
+}
+
+type Read = (stage: StageDesign) => number | null | undefined;
+
+const row = (label: string, unit: string, style: Omit<GainCell, 'value'>, read: Read) => ({
+  of: (stages: readonly StageDesign[]): GainRow => ({
+    label,
+    unit,
+    cells: stages.map((stage) => ({ value: read(stage) ?? null, ...style })),
+  }),
+});
+
+/** A row of frequencies, all in the prefix that suits the largest. */
+const frequencies = (label: string, digits: number, read: Read) => ({
+  of: (stages: readonly StageDesign[]): GainRow => {
+    const largest = Math.max(0, ...stages.map((stage) => Math.abs(read(stage) ?? 0)));
+    const [scale, unit] = prefixes.find(([at]) => largest >= at) ?? [1, 'Hz'];
+    return row(label, unit, { decimals: digits }, (stage) => scaled(read(stage), scale)).of(stages);
+  },
+});
+
+const scaled = (value: number | null | undefined, scale: number): number | null =>
+  value === null || value === undefined ? null : value / scale;
+
+const percent = (value: number | null): number | null => (value === null ? null : 100 * value);
+const decibels = (ratio: number | null): number | null => (ratio === null ? null : 20 * Math.log10(ratio));
+
+/** Rows that no stage has a value for are left out: ζ of a third-order loop. */
+const present = (rows: GainRow[]): GainRow[] =>
+  rows.filter(({ cells }) => cells.some((cell) => 'mantissa' in cell || cell.value !== null));
+
+function askedRows(stages: readonly StageDesign[]): GainRow[] {
+  return present([
+    row('Noise bandwidth BnT', '', { decimals: 4 }, (stage) => stage.noiseBandwidth.wanted).of(stages),
+    row('Damping ζ', '', { decimals: 4 }, (stage) => stage.damping.wanted).of(stages),
+  ]);
+}
+
+function reachedRows(stages: readonly StageDesign[]): GainRow[] {
+  return [
+    row('Noise bandwidth BnT', '', { decimals: 6 }, (stage) => stage.noiseBandwidth.exact).of(stages),
+    frequencies('Noise bandwidth Bn', 2, (stage) => stage.noiseBandwidthHz.exact).of(stages),
+    ...present([row('Damping ζ', '', { decimals: 6 }, (stage) => stage.damping.exact).of(stages)]),
+    ...present([frequencies('Natural frequency', 3, (stage) => stage.naturalFrequencyHz.exact).of(stages)]),
+    row('Phase margin', '°', { decimals: 1 }, (stage) => stage.margins.phaseDeg).of(stages),
+    row('Gain margin', 'dB', { decimals: 1 }, (stage) => decibels(stage.margins.gainUp)).of(stages),
+    row('Peaking of H', 'dB', { decimals: 2 }, (stage) => stage.peakingDb).of(stages),
+    row('Settles to 2 %', 'updates', { decimals: 0 }, (stage) => stage.settlingUpdates).of(stages),
+    row('Stable up to delay', 'updates', { decimals: 0 }, (stage) => stage.largestDelay).of(stages),
+  ];
+}
+
+const scientific = { significant: 5, exponent: true };
+
+type GainName = 'g1' | 'g2' | 'g3';
+
+/** An integral gain that a first-order loop lacks is none, not 0. */
+const gainOf = ({ gains }: StageDesign, name: GainName): number | null => gains[name] || null;
+
+function loopGainRows(stages: readonly StageDesign[]): GainRow[] {
+  return present([
+    row('Proportional g1', '', scientific, (stage) => gainOf(stage, 'g1')).of(stages),
+    row('Integral g2', '', scientific, (stage) => gainOf(stage, 'g2')).of(stages),
+    row('Second integral g3', '', scientific, (stage) => gainOf(stage, 'g3')).of(stages),
+  ]);
+}
+
+/** What one detector unit turns the oscillator by: the loop's gains over the slope of the detector. */
+function detectorGainRows(stages: readonly StageDesign[], slope: number): GainRow[] {
+  const over = (name: GainName) => (stage: StageDesign) => scaled(gainOf(stage, name), slope);
+  return present([
+    row('Proportional', '', scientific, over('g1')).of(stages),
+    row('Integral', '', scientific, over('g2')).of(stages),
+    row('Second integral', '', scientific, over('g3')).of(stages),
+  ]);
+}
+
+function wordRows(stages: readonly StageDesign[]): GainRow[] {
+  return [
+    ...words('Proportional', 'proportional', stages),
+    ...words('Integral', 'integral', stages),
+    ...words('Second integral', 'integral2', stages),
+    row('BnT from words', '', { decimals: 6 }, (stage) => stage.noiseBandwidth.effective).of(stages),
+    row('Error of BnT', '%', { decimals: 3, sign: true }, (stage) => percent(stage.bandwidthError)).of(stages),
+    ...present([row('ζ from words', '', { decimals: 6 }, (stage) => stage.damping.effective).of(stages)]),
+  ];
+}
+
+function words(
+  label: string,
+  name: 'proportional' | 'integral' | 'integral2',
+  stages: readonly StageDesign[],
+): GainRow[] {
+  const cells = stages.map((stage) => stage.words[name]).filter((word) => word !== undefined);
+  return cells.length === stages.length ? [{ label, unit: '', cells }] : [];
+}
+
+/** Characters that a cell sets behind its point, the point and the exponent included: what aligns a column. */
+export function widthBehindPoint(cell: GainCell | GainWordCell): number {
+  if ('mantissa' in cell) return 3;
+  if (cell.exponent) return (cell.significant ?? 1) + 3;
+  return cell.decimals ? cell.decimals + 1 : 0;
+}

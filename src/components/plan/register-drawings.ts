@@ -1,0 +1,66 @@
+import type { Design } from '../../../shared/model/design';
+import type { RegisterMap } from '../../../shared/model/register-map';
+import { registerValues, type FieldValue, type RegisterValue } from '../../../shared/registers/binding';
+import { hexText, wordBitsOf } from '../../../shared/registers/map';
+import { quantitiesOf } from '../../../shared/registers/quantities';
+
+/** A register as KsRegister draws it. */
+export interface RegisterDrawing {
+  name: string;
+  address: string;
+  value: string;
+  /** The word of the revision, where it differs. */
+  was: string | undefined;
+  width: number;
+  /** `selected`: the draft writes something else into the field than the revision did. */
+  fields: { name: string; high: number; low: number; value: string; selected: boolean }[];
+  /** Holds gain words, which people compare first. */
+  gains: boolean;
+}
+
+export interface RegisterSource {
+  map: RegisterMap;
+  /** Hexadecimal, `0x…`. */
+  baseAddress: string;
+  design: Design;
+  /** The design of the revision that the draft starts from. */
+  before: Design | undefined;
+}
+
+/** What a design writes into the registers of a map, register by register, beside what the revision wrote. */
+export function registerDrawings({ map, baseAddress, design, before }: RegisterSource): RegisterDrawing[] {
+  const old = new Map(before && valuesOf(map, before).map((value) => [value.register.name, value]));
+  const bits = wordBitsOf(map);
+  return valuesOf(map, design).map((value) => drawing(value, old.get(value.register.name), baseAddress, bits));
+}
+
+/** Words of a design by register name, in the order of the map. */
+export const wordsOf = (map: RegisterMap, design: Design): ReadonlyMap<string, string> =>
+  new Map(valuesOf(map, design).map(({ register, value }) => [register.name, hexText(value, wordBitsOf(map))]));
+
+const valuesOf = (map: RegisterMap, design: Design): RegisterValue[] =>
+  registerValues(map, quantitiesOf({ plan: design.plan, design }));
+
+function drawing(now: RegisterValue, old: RegisterValue | undefined, base: string, width: number): RegisterDrawing {
+  const { register, value, fields } = now;
+  return {
+    name: register.name,
+    address: hexText(BigInt(base) + BigInt(register.offset), 32),
+    value: hexText(value, width),
+    was: old && old.value !== value ? hexText(old.value, width) : undefined,
+    width,
+    fields: fields.map((field, index) => ({
+      ...{ name: field.field.name, high: field.field.high, low: field.field.low, value: held(field) },
+      selected: old !== undefined && old.fields[index]?.raw !== field.raw,
+    })),
+    gains: fields.some(({ quantity }) => /\.(proportional|integral)\./.test(quantity?.path ?? '')),
+  };
+}
+
+/** Long words in hexadecimal, short ones in decimal, a choice by its name. */
+function held({ field, value, raw, quantity, fault }: FieldValue): string {
+  if (fault) return 'does not fit';
+  if (quantity?.choice) return quantity.choice;
+  const width = field.high - field.low + 1;
+  return width > 16 ? hexText(raw, width) : String(value).replace('-', '\u2212');
+}
