@@ -46,7 +46,7 @@ export interface ReplayTrace {
   stage: number[];
   lockedAtSymbol: number | null;
   outcome: 'locked' | 'false-lock' | 'unlocked';
-  /** [I, Q] in units of full scale. */
+  /** [I, Q] in units of the amplitude: the first samples of the trial and the last. */
   constellation: { before: [number, number][]; after: [number, number][] };
 }
 

@@ -1,4 +1,5 @@
 import type { ReplayPoint } from '../../../shared/model/replay-point';
+import { replayCheck } from '../../../shared/replay/job';
 import type { CompleteCheck } from '../../api/replays';
 
 /** One point that a check asks for, with its result once there is one. */
@@ -9,15 +10,12 @@ export interface CheckPoint {
   result: ReplayPoint | undefined;
 }
 
-/** Offsets of a range, evenly spaced, both ends included. */
-export function offsetsOf({ start, stop, points }: CompleteCheck['carrierOffsetHz']): number[] {
-  if (points < 2) return [start];
-  return Array.from({ length: points }, (_, place) => start + (place * (stop - start)) / (points - 1));
-}
+/** Offsets of a check, as the simulator spaces them. */
+export const offsetsOf = (check: CompleteCheck): number[] => replayCheck(check).offsetsHz;
 
 /** Every point of a check for one Es/N0, by rising offset. A result is found by its index, as the server numbers them. */
 export function pointsAt(check: CompleteCheck, esN0Db: number, results: readonly ReplayPoint[]): CheckPoint[] {
-  const offsets = offsetsOf(check.carrierOffsetHz);
+  const offsets = offsetsOf(check);
   const first = check.esN0Db.indexOf(esN0Db) * offsets.length;
   const byIndex = new Map(results.map((result) => [result.index, result]));
   return offsets

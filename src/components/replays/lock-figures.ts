@@ -1,13 +1,16 @@
 import { ticks } from 'd3';
 import { numberText } from '../../../shared/quantities/format';
 import type { Replay } from '../../api/replays';
+import type { Axis, Band, Marker, PlotData, Tone } from '../plot/plot-model';
 import { pointsAt, type CheckPoint } from './check-points';
 import type { OffsetScale } from './offset-scale';
 import { percentText } from './replay-facts';
 
 /** Colours of the Es/N0 values of one figure, in their order. */
-const tones = ['track', 'acquire', 'ink'] as const;
-export type Tone = (typeof tones)[number];
+const tones: readonly Tone[] = ['track', 'acquire', 'ink'];
+
+/** What a figure shows, under its title. */
+export type Figure = PlotData & { title: string };
 
 /** One Es/N0 of a figure. */
 interface Level {
@@ -40,14 +43,14 @@ const levelsOf = (replay: Replay, group: readonly number[]): Level[] =>
   }));
 
 /** Lock share over offset with its intervals. Points that have not run lie hollow on the axis. */
-export function shareFigure(input: FigureInput, group: readonly number[]) {
+export function shareFigure(input: FigureInput, group: readonly number[]): Figure {
   const { replay, scale } = input;
   const { check } = replay;
   const levels = levelsOf(replay, group);
   return {
     title: `Locked, share of ${numberText(check.trials)} trials, ${percentText(check.limits.confidence)} interval`,
     x: offsetAxis(input),
-    y: { label: 'share', domain: [0, 1] as [number, number], ticks: [0, 0.25, 0.5, 0.75, 1], zero: true },
+    y: { label: 'share', domain: [0, 1], ticks: [0, 0.25, 0.5, 0.75, 1], zero: true },
     series: levels.map((level, place) => ({
       label: level.label,
       tone: level.tone,
@@ -63,14 +66,14 @@ export function shareFigure(input: FigureInput, group: readonly number[]) {
 }
 
 /** The same close to 1, where the limit lies. Intervals that leave the figure are cut at its edge. */
-export function nearOneFigure(input: FigureInput, group: readonly number[]) {
+export function nearOneFigure(input: FigureInput, group: readonly number[]): Figure {
   const { replay, scale } = input;
   const limit = replay.check.limits.lockProbability;
   const least = Math.max(0, 1 - 6 * Math.max(1 - limit, 0.001));
   return {
     title: 'Same, near 1',
     x: offsetAxis(input, 4),
-    y: { label: 'share', domain: [least, 1] as [number, number] },
+    y: { label: 'share', domain: [least, 1] },
     series: [],
     bands: requiredBand(input, true),
     limits: [{ at: limit, label: `limit ${numberText(limit)}` }],
@@ -84,7 +87,7 @@ export function nearOneFigure(input: FigureInput, group: readonly number[]) {
 }
 
 /** Median lock time with the band up to the 95th percentile. */
-export function timeFigure(input: FigureInput, group: readonly number[], switchSymbols: number | undefined) {
+export function timeFigure(input: FigureInput, group: readonly number[], switchSymbols: number | undefined): Figure {
   const { replay, scale } = input;
   const timed = levelsOf(replay, group).map((level) => ({ ...level, times: done(level).flatMap(timeOf(scale)) }));
   const longest = Math.max(0, ...timed.flatMap(({ times }) => times.map(([, , most]) => most)));
@@ -99,15 +102,16 @@ export function timeFigure(input: FigureInput, group: readonly number[], switchS
       area: level.times,
     })),
     bands: requiredBand(input, true),
+    markers: [],
     limits:
       switchSymbols !== undefined && switchSymbols <= 2 * longest
-        ? [{ at: switchSymbols, label: `stage switch ${numberText(switchSymbols)}`, tone: 'soft' as const }]
+        ? [{ at: switchSymbols, label: `stage switch ${numberText(switchSymbols)}`, tone: 'soft' }]
         : [],
   };
 }
 
 /** Phase jitter after lock beside the thermal budget, where the plan's own Es/N0 is among those replayed. */
-export function jitterFigure(input: FigureInput, group: readonly number[], budgetDeg: number | undefined) {
+export function jitterFigure(input: FigureInput, group: readonly number[], budgetDeg: number | undefined): Figure {
   const { replay, scale } = input;
   return {
     title: 'Phase jitter, ° rms',
@@ -118,7 +122,7 @@ export function jitterFigure(input: FigureInput, group: readonly number[], budge
     limits:
       budgetDeg === undefined
         ? []
-        : [{ at: budgetDeg, label: `thermal budget ${numberText(budgetDeg, { decimals: 2 })}`, tone: 'soft' as const }],
+        : [{ at: budgetDeg, label: `thermal budget ${numberText(budgetDeg, { decimals: 2 })}`, tone: 'soft' }],
     markers: levelsOf(replay, group).flatMap((level) =>
       done(level).flatMap(({ offsetHz, result }) =>
         result.phaseJitterDeg === null
@@ -139,7 +143,7 @@ const timeOf =
   ({ offsetHz, result }: DonePoint): [x: number, median: number, most: number][] =>
     result.lockTimeSymbols ? [[scale.of(offsetHz), result.lockTimeSymbols.p50, result.lockTimeSymbols.p95]] : [];
 
-const shareMarkers = (level: Level, scale: OffsetScale, least: number) =>
+const shareMarkers = (level: Level, scale: OffsetScale, least: number): Marker[] =>
   done(level).map(({ offsetHz, result: { lockProbability, verdict } }) => ({
     x: scale.of(offsetHz),
     y: Math.max(least, lockProbability.estimate),
@@ -150,7 +154,7 @@ const shareMarkers = (level: Level, scale: OffsetScale, least: number) =>
     undecided: verdict === 'undecided',
   }));
 
-function waitingMarkers(level: Level, scale: OffsetScale) {
+function waitingMarkers(level: Level, scale: OffsetScale): Marker[] {
   const waiting = level.points.filter(({ result }) => !result);
   return waiting.map(({ offsetHz }, place) => ({
     x: scale.of(offsetHz),
@@ -169,13 +173,13 @@ function labelPlace(level: Level, place: number, of: number, scale: OffsetScale)
     : scale.of(points[Math.floor((points.length * (place + 1)) / (of + 1))]!.offsetHz);
 }
 
-function offsetAxis({ replay, scale, requiredHz }: FigureInput, wanted = 6) {
+function offsetAxis({ replay, scale, requiredHz }: FigureInput, wanted = 6): Axis {
   const { start, stop } = replay.check.carrierOffsetHz;
   const [low, high] = [scale.of(Math.min(start, stop)), scale.of(Math.max(start, stop))];
   return {
     label: 'carrier offset',
     unit: scale.unit,
-    domain: (low === high ? [low - 1, high + 1] : [low, high]) as [number, number],
+    domain: low === high ? [low - 1, high + 1] : [low, high],
     ticks: offsetTicks(low, high, scale.of(requiredHz), wanted),
   };
 }
@@ -188,7 +192,7 @@ export function offsetTicks(low: number, high: number, required: number, wanted:
   return [...round, ...own].sort((a, b) => a - b);
 }
 
-function requiredBand({ replay, scale, requiredHz }: FigureInput, quiet = false) {
+function requiredBand({ replay, scale, requiredHz }: FigureInput, quiet = false): Band[] {
   if (requiredHz === 0) return [];
   const { start, stop } = replay.check.carrierOffsetHz;
   const from = Math.max(-requiredHz, Math.min(start, stop));

@@ -29,7 +29,7 @@ export function replayStanding({ state, verdict }: Pick<ReplaySummary, 'state' |
   return { state: state === 'running' ? 'running' : 'none', label: stateWords[state] };
 }
 
-export const scaleOf = (check: CompleteCheck): OffsetScale => offsetScale(offsetsOf(check.carrierOffsetHz));
+export const scaleOf = (check: CompleteCheck): OffsetScale => offsetScale(offsetsOf(check));
 
 /** “41, ±155 kHz”, “21, +10 to +20 kHz”. */
 export function offsetsText(check: CompleteCheck): string {

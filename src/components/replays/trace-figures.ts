@@ -1,12 +1,20 @@
 import { numberText } from '../../../shared/quantities/format';
 import type { ReplayTrace } from '../../api/replays';
+import type { Axis, Limit } from '../plot/plot-model';
+import type { Figure } from './lock-figures';
 import type { OffsetScale } from './offset-scale';
 
 /** Three strips over the same symbols: what the loop holds, how far off it is, what the NCO is told. */
-export function traceFigures(trace: ReplayTrace, offsetHz: number, scale: OffsetScale) {
-  const x = { label: 'symbols', unit: 'symbols', domain: [0, trace.symbols] as [number, number] };
+export function traceFigures(
+  trace: ReplayTrace,
+  offsetHz: number,
+  scale: OffsetScale,
+): (Figure & { height: number })[] {
+  const x: Axis = { label: 'symbols', unit: 'symbols', domain: [0, trace.symbols] };
   const limits = eventsOf(trace);
   const strip = (title: string, values: readonly number[], tone: 'track' | 'ink', ticks?: number[]) => ({
+    bands: [],
+    markers: [],
     title,
     x,
     y: { label: title, ...(ticks && { ticks }) },
@@ -31,16 +39,15 @@ export function traceFigures(trace: ReplayTrace, offsetHz: number, scale: Offset
   ];
 }
 
-function eventsOf(trace: ReplayTrace) {
+function eventsOf(trace: ReplayTrace): Limit[] {
+  const upright = (at: number, label: string): Limit => ({ at, label, tone: 'soft', axis: 'x' });
   const locked = trace.lockedAtSymbol;
   const switches = trace.stage.flatMap((stage, at) =>
     at > 0 && stage !== trace.stage[at - 1] ? [trace.symbol[at] ?? 0] : [],
   );
   return [
-    ...(locked === null
-      ? []
-      : [{ at: locked, label: `locked at ${numberText(locked)}`, tone: 'soft' as const, axis: 'x' as const }]),
-    ...switches.map((at) => ({ at, label: 'stage switch', tone: 'soft' as const, axis: 'x' as const })),
+    ...(locked === null ? [] : [upright(locked, `locked at ${numberText(locked)}`)]),
+    ...switches.map((at) => upright(at, 'stage switch')),
   ];
 }
 

@@ -5,11 +5,11 @@ import { check, result } from '../../support/replay';
 describe('offsetsOf', () => {
   // By hand: 155 kHz in four steps of 38.75 kHz.
   it('spaces the offsets evenly, both ends included', () => {
-    expect(offsetsOf(check.carrierOffsetHz)).toEqual([-77_500, -38_750, 0, 38_750, 77_500]);
+    expect(offsetsOf(check)).toEqual([-77_500, -38_750, 0, 38_750, 77_500]);
   });
 
   it('gives the start alone for one point', () => {
-    expect(offsetsOf({ start: 5, stop: 9, points: 1 })).toEqual([5]);
+    expect(offsetsOf({ ...check, carrierOffsetHz: { start: 5, stop: 9, points: 1 } })).toEqual([5]);
   });
 });
 

@@ -45,7 +45,7 @@ describe('nearOneFigure', () => {
   it('cuts an interval at the edge and leaves out what lies below it', () => {
     const low = result(3, 'fail', { lockProbability: { estimate: 0.5, lower: 0.45, upper: 0.55 } });
     const { markers, y } = nearOneFigure({ ...input, replay: replay({ points: [result(0, 'fail'), low] }) }, group);
-    expect(y.domain[0]).toBeCloseTo(0.94, 12);
+    expect(y.domain![0]).toBeCloseTo(0.94, 12);
     expect(markers).toHaveLength(1);
     expect(markers[0]!.low).toBeCloseTo(0.942, 12);
   });
