@@ -113,12 +113,11 @@ export function largestTheta(shape: LoopShape, start: number): number {
 
 /** Where the bandwidth stops rising with θ: it turns, or its pole pair ends, or the loop is unstable. */
 function peak(bandwidthAt: (theta: number) => number, start: number): number {
-  const ratio = 1.15;
-  let [low, reached] = [start, NaN];
-  while (!((reached = bandwidthAt(low)) > 0) && low > 1e-9) low /= 2;
+  let low = start;
+  while (!(bandwidthAt(low) > 0) && low > 1e-9) low /= 2;
   // Down to where the bandwidth is sure to rise, then up again step by step.
-  while (low > start / 64 && bandwidthAt(low / 2) > reached) reached = bandwidthAt((low /= 2));
-  let step = ratio;
+  while (low > start / 64 && bandwidthAt(low / 2) > bandwidthAt(low)) low /= 2;
+  let [reached, step] = [bandwidthAt(low), 1.15];
   while (step - 1 > 1e-9) {
     const next = bandwidthAt(low * step);
     if (next > reached) [low, reached] = [low * step, next];

@@ -1,3 +1,5 @@
+import { evaluatePolynomial, squaredModulus } from '../math/complex';
+import type { Complex } from '../math/complex';
 import { delayExponent, forwardPolynomial } from './linear-loop';
 import type { LinearLoop } from './linear-loop';
 
@@ -54,8 +56,14 @@ export function responsePowers(loop: LinearLoop, points: CirclePoints): Response
 }
 
 /** |H|² at one frequency, radians per update. */
-export const closedLoopPower = (loop: LinearLoop, omega: number): number =>
-  responsePowers(loop, circlePoints(loop, Float64Array.of(omega))).h[0] as number;
+export function closedLoopPower(loop: LinearLoop, omega: number): number {
+  const chord = 2 * Math.sin(omega / 2);
+  const open = chord ** loop.order;
+  const angle = delayExponent(loop) * omega + (loop.order * (Math.PI + omega)) / 2;
+  const forward = evaluatePolynomial(forwardPolynomial(loop), [(-chord * chord) / 2, Math.sin(omega)]).value;
+  const below: Complex = [forward[0] + open * Math.cos(angle), forward[1] + open * Math.sin(angle)];
+  return squaredModulus(forward) / squaredModulus(below);
+}
 
 /** `count` frequencies from `low` to `high`, equal ratios, both ends exact. */
 export function logarithmicPoints(low: number, high: number, count: number): Float64Array {

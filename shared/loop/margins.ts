@@ -39,6 +39,7 @@ export function openLoop(loop: LinearLoop, omega: number): { power: number; phas
 
 /** Every frequency at which |L| passes 1. */
 export function gainCrossings(loop: LinearLoop): GainCrossing[] {
+  if (loop.order === 0) return [];
   const level = (x: number): number => Math.log(openLoop(loop, Math.exp(x)).power);
   return signChanges(level, scanRange(loop)).map((x) => {
     const omega = Math.exp(x);
@@ -46,36 +47,48 @@ export function gainCrossings(loop: LinearLoop): GainCrossing[] {
   });
 }
 
-/** Margins of a loop with its delay. */
-export function margins(loop: LinearLoop): Margins {
-  const phaseDeg = phaseMarginDeg(gainCrossings(loop), 0);
-  if (!isStable(loop)) return { phaseDeg, gainUp: null, gainDown: null };
+/** Margins of a loop with its delay, and how far its delay and its gain may grow. */
+export interface StabilityLimits {
+  margins: Margins;
+  /** Largest extra delay in updates that leaves the loop stable with these gains; null where no delay does. */
+  largestDelay: number | null;
+  /** Ratio by which the gain may grow before the loop is unstable, below 1 for one that is; null where none is. */
+  largestGain: number | null;
+  crossings: GainCrossing[];
+}
+
+export function stabilityLimits(loop: LinearLoop): StabilityLimits {
+  const crossings = gainCrossings(loop);
+  const phaseDeg = phaseMarginDeg(crossings, 0);
   const ratios = criticalRatios(loop);
-  const up = ratios.filter((ratio) => ratio > 1);
-  const down = ratios.filter((ratio) => ratio < 1);
-  return { phaseDeg, gainUp: up.length ? Math.min(...up) : null, gainDown: down.length ? Math.max(...down) : null };
+  const delay = largestDelay(loop, crossings);
+  if (!isStable(loop)) {
+    const margins = { phaseDeg, gainUp: null, gainDown: null };
+    return { margins, largestDelay: delay, largestGain: stableRatio(loop, ratios), crossings };
+  }
+  const gainUp = leastOf(ratios.filter((ratio) => ratio > 1));
+  const gainDown = largestOf(ratios.filter((ratio) => ratio < 1));
+  return { margins: { phaseDeg, gainUp, gainDown }, largestDelay: delay, largestGain: gainUp, crossings };
 }
 
 /** Least phase margin over the crossings with some updates of delay more (or fewer), degrees. */
 export function phaseMarginDeg(crossings: readonly GainCrossing[], furtherDelay: number): number | null {
-  if (crossings.length === 0) return null;
-  return (Math.min(...crossings.map(({ omega, phaseMargin }) => phaseMargin - furtherDelay * omega)) * 180) / Math.PI;
+  const least = leastOf(crossings.map(({ omega, phaseMargin }) => phaseMargin - furtherDelay * omega));
+  return least === null ? null : (least * 180) / Math.PI;
 }
 
-/** Largest extra delay in updates that leaves the loop stable with these gains; null where no delay does. */
-export function largestDelay(loop: LinearLoop): number | null {
+function largestDelay(loop: LinearLoop, crossings: readonly GainCrossing[]): number | null {
   if (!isStable({ ...loop, delay: 0 })) return null;
-  const spare = gainCrossings(loop).map(({ omega, phaseMargin }) => phaseMargin / omega + loop.delay);
-  if (spare.length === 0) return null;
-  return Math.max(0, Math.ceil(Math.min(...spare)) - 1);
+  const least = leastOf(crossings.map(({ omega, phaseMargin }) => phaseMargin / omega + loop.delay));
+  return least === null ? null : Math.max(0, Math.ceil(least) - 1);
 }
 
-/** Ratio by which the gain may grow before the loop is unstable, below 1 for a loop that is; null where none is. */
-export function largestGain(loop: LinearLoop): number | null {
-  if (isStable(loop)) return margins(loop).gainUp;
-  const ratios = criticalRatios(loop).filter((ratio) => ratio < 1 && isStable(scaledLoop(loop, 0.999 * ratio)));
-  return ratios.length ? Math.max(...ratios) : null;
-}
+/** The ratio to which the gain of an unstable loop has to fall. */
+const stableRatio = (loop: LinearLoop, ratios: readonly number[]): number | null =>
+  largestOf(ratios.filter((ratio) => ratio < 1 && isStable(scaledLoop(loop, 0.999 * ratio))));
+
+const leastOf = (values: readonly number[]): number | null => (values.length ? Math.min(...values) : null);
+const largestOf = (values: readonly number[]): number | null => (values.length ? Math.max(...values) : null);
 
 /** Ratios of the gain that put a pole on the unit circle: 1/|L| wherever L is real and negative. */
 function criticalRatios(loop: LinearLoop): number[] {

@@ -2,7 +2,8 @@ import type { MarginAgainstDelay, PhaseStep, Response } from '../model/design';
 import { largestBetween, bisect } from '../math/root-search';
 import { circlePoints, closedLoopPower, logarithmicPoints, responsePowers } from './frequency-response';
 import type { LinearLoop } from './linear-loop';
-import { gainCrossings, phaseMarginDeg } from './margins';
+import { phaseMarginDeg } from './margins';
+import type { GainCrossing } from './margins';
 import type { StepResponse } from './step-response';
 
 const stepPoints = 160;
@@ -75,11 +76,10 @@ export function stepCurve({ phase, settlingUpdates }: StepResponse): PhaseStep {
 }
 
 /** Phase margin of these gains over every extra delay that a plan can ask for; null where the loop is unstable. */
-export function marginCurve(loop: LinearLoop): MarginAgainstDelay {
-  const crossings = gainCrossings({ ...loop, delay: 0 });
+export function marginCurve(loop: LinearLoop, crossings: readonly GainCrossing[]): MarginAgainstDelay {
   const delay = Array.from({ length: longestDelay + 1 }, (_, d) => d);
   const phaseDeg = delay.map((d) => {
-    const margin = phaseMarginDeg(crossings, d);
+    const margin = phaseMarginDeg(crossings, d - loop.delay);
     return margin !== null && margin > 0 ? margin : null;
   });
   return { delay, phaseDeg };

@@ -2,7 +2,7 @@ import type { Achieved, Gains, StageDesign, StageWords } from '../model/design';
 import { analogPoles } from './analog-poles';
 import { dominantDamping } from './dominant-pair';
 import type { LinearLoop } from './linear-loop';
-import { gainCrossings, largestDelay, largestGain, margins, phaseMarginDeg } from './margins';
+import { gainCrossings, phaseMarginDeg, stabilityLimits } from './margins';
 import { noiseBandwidth } from './noise-bandwidth';
 import { closedLoopPoles } from './poles';
 import { closedLoopShape, emptyResponse, marginCurve, stepCurve } from './response-curves';
@@ -26,24 +26,25 @@ export function stageDesign(input: StageInput): StageDesign {
   const { wanted, solved, words } = input;
   const { loop } = solved;
   const achieved = achievedValues(input);
+  const limits = stabilityLimits(loop);
   return {
     name: wanted.stage.name,
     gains: stageGains(input),
     ...achieved,
     bandwidthError: relativeError(achieved.noiseBandwidth),
     dampingError: relativeError(achieved.damping),
-    margins: margins(loop),
+    margins: limits.margins,
     effectivePhaseDeg: phaseMarginDeg(gainCrossings(input.effective), 0),
     analogPoles: analogPoles({
       order: loop.order,
       damping: solved.damping ?? 1,
       omega: 2 * solved.theta * input.updateRateHz,
     }),
-    largestDelay: largestDelay(loop),
-    largestGain: largestGain(loop),
+    largestDelay: limits.largestDelay,
+    largestGain: limits.largestGain,
     words,
     ...responses(loop, input.updateRateHz),
-    marginAgainstDelay: marginCurve(loop),
+    marginAgainstDelay: marginCurve(loop, limits.crossings),
   };
 }
 

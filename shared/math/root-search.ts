@@ -11,7 +11,7 @@ export function bisect(sign: (x: number) => number, from: number, to: number): n
   return (low + high) / 2;
 }
 
-/** Largest value of a function around the middle of three points, by golden section. */
+/** Largest value of a function between two points that has one maximum there, by golden section. */
 export function largestBetween(
   value: (x: number) => number,
   from: number,
@@ -20,11 +20,18 @@ export function largestBetween(
 ): { x: number; value: number } {
   const share = (Math.sqrt(5) - 1) / 2;
   let [low, high] = [from, to];
+  let left = pointAt(value, high - share * (high - low));
+  let right = pointAt(value, low + share * (high - low));
   for (let round = 0; round < rounds; round += 1) {
-    const [left, right] = [high - share * (high - low), low + share * (high - low)];
-    if (value(left) < value(right)) low = left;
-    else high = right;
+    if (left.value < right.value) {
+      [low, left] = [left.x, right];
+      right = pointAt(value, low + share * (high - low));
+    } else {
+      [high, right] = [right.x, left];
+      left = pointAt(value, high - share * (high - low));
+    }
   }
-  const x = (low + high) / 2;
-  return { x, value: value(x) };
+  return left.value > right.value ? left : right;
 }
+
+const pointAt = (value: (x: number) => number, x: number) => ({ x, value: value(x) });

@@ -1,0 +1,140 @@
+import type { Finding } from '../model/design';
+import { finding, passed, remedyUnless, say, sayHz, setTo, twoDigitsUp } from './finding';
+import type { Remedy, Severity } from './finding';
+import { askedOf, bandwidthPointer, numberOf, pointerOf, stageAt, stageName } from './loop-view';
+import type { LoopView, StageView } from './loop-view';
+import { fieldNumber } from '../plan/fields';
+import { setBandwidth } from './narrower';
+import { inOneUnit } from './prefix';
+
+/** Range that a remedy leaves beyond what is asked. */
+const spareShare = 1.1;
+/** A pull-in estimate is good to about this factor. */
+const estimateFactor = 2;
+
+export const acquisitionFindings = (view: LoopView): Finding[] => [
+  ...(view.key === 'carrier' ? [...ambiguity(view), ...integratorRange(view)] : []),
+  ...pullIn(view),
+];
+
+function ambiguity(view: LoopView): Finding[] {
+  const { offsetHz, unambiguousHz, falseLockSpacingHz } = view.design.acquisition;
+  if (offsetHz === null || unambiguousHz === null) return [];
+  const severity: Severity = offsetHz >= unambiguousHz ? 'fail' : 'pass';
+  return [
+    finding({
+      slug: 'acquisition.ambiguity',
+      severity,
+      title: passed(severity, 'The carrier offset is unambiguous', 'The carrier can lock at false offsets'),
+      ...inOneUnit(offsetHz, unambiguousHz),
+      sense: 'max',
+      reason: `The carrier can be ±${sayHz(offsetHz)} off (4.2, 4.3); ${view.plan.signal.modulation} repeats every ${sayHz(falseLockSpacingHz as number)}, so beyond ±${sayHz(unambiguousHz)} the loop settles on the wrong offset with a quiet error.`,
+      ...remedyUnless(severity, () => ({
+        remedy: `Search the offset in steps of at most ${sayHz(unambiguousHz)}, or lower 4.2 and 4.3.`,
+        change: null,
+      })),
+      fields: ['/environment/carrierTolerancePpm', '/environment/dopplerHz', '/signal/symbolRateBd'],
+      source: 'rotational symmetry of the modulation, exact',
+    }),
+  ];
+}
+
+function integratorRange(view: LoopView): Finding[] {
+  const { offsetHz, largestOffsetHz } = view.design.acquisition;
+  if (offsetHz === null || largestOffsetHz === null || view.loop.order < 2) return [];
+  const severity: Severity = largestOffsetHz < offsetHz ? 'fail' : 'pass';
+  const path = limitHz(view) === undefined ? 'arithmetic/integratorBits' : 'arithmetic/integratorLimitHz';
+  return [
+    finding({
+      slug: 'acquisition.integrator-range',
+      severity,
+      title: passed(severity, 'The integrator reaches the carrier', 'The integrator stops short of the carrier'),
+      ...inOneUnit(largestOffsetHz, offsetHz),
+      sense: 'min',
+      reason:
+        severity === 'pass'
+          ? `It holds ±${sayHz(largestOffsetHz)}; the carrier can be ±${sayHz(offsetHz)} off (4.2, 4.3).`
+          : `${numberOf(view, path)} stops short of the carrier offset: it holds ±${sayHz(largestOffsetHz)}; the carrier can be ±${sayHz(offsetHz)} off (4.2, 4.3). Beyond that the loop never locks.`,
+      ...remedyUnless(severity, () => widerIntegrator(view, offsetHz / largestOffsetHz)),
+      fields: [pointerOf(view, path), '/environment/carrierTolerancePpm', '/environment/dopplerHz'],
+      source: 'follows from the datapath, exact',
+    }),
+  ];
+}
+
+const limitHz = ({ loop }: LoopView): number | undefined =>
+  (loop.arithmetic as { integratorLimitHz?: number }).integratorLimitHz;
+
+/** A higher limit where the word can hold it, else a wider word. */
+function widerIntegrator(view: LoopView, shortBy: number): Remedy | null {
+  const limit = limitHz(view);
+  const asked = view.design.acquisition.offsetHz as number;
+  const full = wordRangeHz(view);
+  if (limit !== undefined && full >= spareShare * asked) {
+    const value = twoDigitsUp(spareShare * asked);
+    const path = 'arithmetic/integratorLimitHz';
+    return setTo(numberOf(view, path), pointerOf(view, path), value, `±${sayHz(value)}`);
+  }
+  const path = 'arithmetic/integratorBits';
+  const bits = view.loop.arithmetic.integratorBits + Math.max(1, Math.ceil(Math.log2(shortBy)));
+  return bits <= 64 ? setTo(numberOf(view, path), pointerOf(view, path), bits, `${bits} bits`) : null;
+}
+
+/** What the integrator's word alone would hold, Hz. */
+function wordRangeHz({ design, loop }: LoopView): number {
+  const { integratorBits, guardBits } = loop.arithmetic;
+  return 2 ** (integratorBits - 1 - guardBits) * (design.resolutionHz ?? 0);
+}
+
+function pullIn(view: LoopView): Finding[] {
+  const estimate = view.design.acquisition.pullInSymbols;
+  const first = stageAt(view, 0);
+  if (estimate === null || first.result.settlingUpdates === null) return [];
+  const value = Math.round(estimate + first.result.settlingUpdates * view.loop.updateInterval);
+  const { limit, pointer } = timeAllowed(view, first);
+  const severity: Severity = estimateFactor * value > limit ? 'caution' : 'pass';
+  return [
+    finding({
+      slug: 'acquisition.pull-in',
+      severity,
+      title: passed(
+        severity,
+        `${view.title} pulls in in time`,
+        value > limit ? `${view.title} pulls in too slowly` : `${view.title}: pull-in leans on an estimate`,
+      ),
+      value,
+      limit,
+      sense: 'max',
+      unit: 'symbols',
+      reason: `${stageName(first)} takes about ${say(value)} symbols from the largest offset, settling included; ${fieldNumber(pointer)} allows ${say(limit, 6)}. Noise makes it longer, and the estimate is good to about a factor of two.`,
+      ...remedyUnless(severity, () => faster(view, first, limit)),
+      fields: [bandwidthPointer(first), pointer],
+      source: 'F. Gardner, Phaselock Techniques, 2005',
+      estimate: true,
+    }),
+  ];
+}
+
+/** The acquisition limit, or the end of the first stage where that comes before. */
+function timeAllowed(view: LoopView, first: StageView): { limit: number; pointer: string } {
+  const most = view.plan.limits.acquisitionSymbols;
+  const symbols = view.loop.stages.length > 1 ? first.stage.until?.symbols : undefined;
+  return symbols !== undefined && symbols < most
+    ? { limit: symbols, pointer: pointerOf(view, 'stages/0/until/symbols') }
+    : { limit: most, pointer: '/limits/acquisitionSymbols' };
+}
+
+/** Pull-in time falls with the third power of the bandwidth, settling with the first. */
+function faster(view: LoopView, first: StageView, limit: number): Remedy | null {
+  const pull = view.design.acquisition.pullInSymbols as number;
+  const settling = (first.result.settlingUpdates as number) * view.loop.updateInterval;
+  const time = (factor: number): number => pull / factor ** 3 + settling / factor;
+  let factor = 1;
+  while (estimateFactor * time(factor) > limit && factor < 100) factor *= 1.05;
+  const asked = askedOf(first);
+  const product = view.loop.delay * (first.result.noiseBandwidth.exact ?? 0) * view.loop.updateInterval * factor;
+  if (factor >= 100 || product > 0.1 || (first.stage.noiseBandwidth ?? 0) * factor * view.loop.updateInterval > 0.1) {
+    return { remedy: 'Replay the range of offsets, or allow more symbols.', change: null };
+  }
+  return setBandwidth(first, twoDigitsUp(factor * asked));
+}
