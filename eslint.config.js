@@ -29,6 +29,7 @@ export default ts.config(
     rules: {
       '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_' }],
       'vue/multi-word-component-names': 'off',
+      'vue/require-default-prop': 'off', // a typed optional prop says that it may be absent
     },
   },
   forbid('shared/**', 'server|src', 'shared/ is pure: it knows neither server nor browser'),

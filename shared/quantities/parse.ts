@@ -74,7 +74,7 @@ function bareUnit({ unit, shownExponent }: FieldOfQuantity): TypedUnit {
 interface Converted {
   value: number;
   /** Set when a reference was used: the sentence then names it. */
-  by?: Reference;
+  by?: Reference | undefined;
 }
 
 type Known = Exclude<TypedUnit, { kind: 'doubt' | 'unknown' }>;

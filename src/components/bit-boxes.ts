@@ -6,7 +6,7 @@ export function boxesOf(word: {
   bits: number;
   reached: number;
   guard?: number | undefined;
-  overflow?: boolean;
+  overflow?: boolean | undefined;
 }): Box[] {
   const guard = Math.min(word.guard ?? 0, word.bits - 1);
   const whole = word.bits - 1 - guard;

@@ -1,11 +1,11 @@
 /** What every row with a fixed or free text choice has in common. */
 export interface ChoiceProps {
-  number?: string;
+  number?: string | undefined;
   label: string;
   /** What the server says is wrong. */
   error?: string | undefined;
   note?: string | undefined;
-  disabled?: boolean;
+  disabled?: boolean | undefined;
   /** Name of the last revision; set, the row compares with `was`. */
   wasName?: string | undefined;
   inputId?: string | undefined;
@@ -14,7 +14,7 @@ export interface ChoiceProps {
 export interface Option<T> {
   value: T;
   label: string;
-  disabled?: boolean;
+  disabled?: boolean | undefined;
 }
 
 /** "was saturate in r14", undefined while nothing is edited. */

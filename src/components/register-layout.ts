@@ -5,7 +5,7 @@ export interface RegisterField {
   low: number;
   value?: string | undefined;
   /** Under edit: outlined in the accent. */
-  selected?: boolean;
+  selected?: boolean | undefined;
 }
 
 /** A run of bits that is drawn as one box. */

@@ -5,10 +5,10 @@ import type { Unit } from '../../shared/quantities/units';
 export interface Bounds {
   label: string;
   unit: Unit;
-  symmetric?: boolean;
+  symmetric?: boolean | undefined;
   min?: number | undefined;
   max?: number | undefined;
-  optional?: boolean;
+  optional?: boolean | undefined;
 }
 
 export interface Checked {

@@ -12,7 +12,7 @@ export interface Action {
    * @param done said once the work is through, when the page itself does not show it
    * @returns what the work returned, undefined when it was refused or called off
    */
-  run<T>(work: () => Promise<T>, done?: string): Promise<T | undefined>;
+  run: <T>(work: () => Promise<T>, done?: string) => Promise<T | undefined>;
 }
 
 export function useAction(): Action {

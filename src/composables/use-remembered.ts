@@ -3,7 +3,7 @@ import { ref, watch, type Ref } from 'vue';
 const prefix = 'keepstep.';
 
 /** One remembered value of this browser. Storage may be shut off: then nothing is remembered and nothing fails. */
-export function remembered<T>(key: string, fallback: T): { read(): T; write(value: T): void } {
+export function remembered<T>(key: string, fallback: T): { read: () => T; write: (value: T) => void } {
   return {
     read() {
       try {

@@ -7,7 +7,7 @@ export type Theme = 'auto' | 'light' | 'dark';
 let choice: Ref<Theme> | undefined;
 
 /** Light, dark, or as the system says: one choice for Quasar's Dark plugin and for our own tokens. */
-export function useTheme(): { choice: Ref<Theme>; choose(theme: Theme): void } {
+export function useTheme(): { choice: Ref<Theme>; choose: (theme: Theme) => void } {
   choice ??= followed(useRemembered<Theme>('theme', 'auto'));
   const chosen = choice;
   return { choice: chosen, choose: (theme) => (chosen.value = theme) };

@@ -3,17 +3,17 @@ export type Tone = 'track' | 'acquire' | 'ink' | 'soft';
 
 export interface Axis {
   label: string;
-  unit?: string;
-  scale?: 'linear' | 'log';
+  unit?: string | undefined;
+  scale?: 'linear' | 'log' | undefined;
   /** Taken as it is; without it the data decide. */
-  domain?: readonly [number, number];
+  domain?: readonly [number, number] | undefined;
   /** Taken as they are: the plan's own ±77.5 reads better than ±80. */
-  ticks?: readonly number[];
+  ticks?: readonly number[] | undefined;
   /** Zero belongs to the axis: jitter, probability, margin. */
-  zero?: boolean;
+  zero?: boolean | undefined;
   /** As far below zero as above. */
-  symmetric?: boolean;
-  format?: (value: number) => string;
+  symmetric?: boolean | undefined;
+  format?: ((value: number) => string) | undefined;
 }
 
 export interface Series {
@@ -21,29 +21,29 @@ export interface Series {
   tone: Tone;
   /** x ascending. */
   points: readonly (readonly [number, number])[];
-  dash?: boolean;
-  thin?: boolean;
+  dash?: boolean | undefined;
+  thin?: boolean | undefined;
   /** x of the direct label; without it the widest gap is looked for. */
-  labelAt?: number;
+  labelAt?: number | undefined;
   /** No direct label. */
-  quiet?: boolean;
+  quiet?: boolean | undefined;
   /** Band around the curve: x, low, high. */
-  area?: readonly (readonly [number, number, number])[];
+  area?: readonly (readonly [number, number, number])[] | undefined;
 }
 
 /** A shaded range of x: what the plan asks for. */
 export interface Band {
   from: number;
   to: number;
-  label?: string;
+  label?: string | undefined;
 }
 
 export interface Limit {
   at: number;
   label: string;
   /** `y` draws a level line, `x` an upright one. */
-  axis?: 'y' | 'x';
-  tone?: 'fail' | 'soft';
+  axis?: 'y' | 'x' | undefined;
+  tone?: 'fail' | 'soft' | undefined;
 }
 
 export interface Marker {
@@ -51,14 +51,14 @@ export interface Marker {
   y: number;
   tone: Tone;
   /** Ends of the error bar. */
-  low?: number;
-  high?: number;
+  low?: number | undefined;
+  high?: number | undefined;
   /** Not yet run, or not a measurement. */
-  hollow?: boolean;
+  hollow?: boolean | undefined;
   /** Not enough to say: hollow, in the colour of caution. */
-  undecided?: boolean;
-  label?: string;
-  shape?: 'dot' | 'cross';
+  undecided?: boolean | undefined;
+  label?: string | undefined;
+  shape?: 'dot' | 'cross' | undefined;
 }
 
 export const toneClass: Readonly<Record<Tone, string>> = { track: 'trk', acquire: 'acq', ink: 'ink', soft: 'sof' };

@@ -117,7 +117,13 @@ export function tickText(axis: Axis, value: number): string {
     : numberText(Number(value.toPrecision(12)));
 }
 
+const siSteps = [
+  { from: 1e9, letter: 'G' },
+  { from: 1e6, letter: 'M' },
+  { from: 0, letter: 'k', by: 1e3 },
+];
+
 function prefixedText(value: number): string {
-  const [letter, exponent] = Math.abs(value) >= 1e9 ? ['G', 9] : Math.abs(value) >= 1e6 ? ['M', 6] : ['k', 3];
-  return `${numberText(Number((value / 10 ** Number(exponent)).toPrecision(12)))}\u202f${letter}`;
+  const { from, letter, by = from } = siSteps.find((step) => Math.abs(value) >= step.from)!;
+  return `${numberText(Number((value / by).toPrecision(12)))}\u202f${letter}`;
 }
