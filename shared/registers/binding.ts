@@ -1,6 +1,6 @@
 import type { Finding } from '../model/design';
 import type { Field, Register, RegisterMap } from '../model/register-map';
-import { fieldRange, fieldWidth, fitsField, integerText, rawBits, withField } from './bits';
+import { fieldRange, fieldWidth, fitsField, integerText, isPlaced, rawBits, withField } from './bits';
 import { bySeverity, mapFinding } from './map-finding';
 import type { QuantityValue } from './quantities';
 
@@ -31,7 +31,7 @@ const lowOf = (field: Field): number => field.quantityLow ?? 0;
 
 /** Fields of the whole map that hold a part of the same quantity. */
 const partsOf = (map: RegisterMap, quantity: string): Field[] =>
-  map.registers.flatMap(({ fields }) => fields.filter((field) => field.quantity === quantity));
+  map.registers.flatMap(({ fields }) => fields.filter((field) => field.quantity === quantity && isPlaced(field)));
 
 /** Where a quantity is split over fields, only the part with the highest bits must hold its sign and its end. */
 function fitFault(value: bigint, field: Field, parts: readonly Field[]): string | undefined {
@@ -69,6 +69,7 @@ function keptValue(field: Field): FieldValue {
 }
 
 function fieldValue(map: RegisterMap, field: Field, values: Values): FieldValue {
+  if (!isPlaced(field)) return { field, value: 0n, raw: 0 };
   const quantity = field.quantity === undefined ? undefined : values.get(field.quantity);
   return quantity ? boundValue(map, field, quantity) : keptValue(field);
 }
@@ -77,14 +78,16 @@ function fieldValue(map: RegisterMap, field: Field, values: Values): FieldValue 
  * What the words of a plan write into every register of a map, in the order of the map. A field that the plan gives
  * no value for, and every reserved bit, holds its reset value.
  *
- * @param map register map without failing findings
+ * @param map register map; a field without its bits, as a form may hold it, writes nothing
  * @param quantities what {@link quantitiesOf} gives for the plan
  */
 export function registerValues(map: RegisterMap, quantities: readonly QuantityValue[]): RegisterValue[] {
   const values: Values = new Map(quantities.map((quantity) => [quantity.path, quantity]));
   return map.registers.map((register) => {
     const fields = register.fields.map((field) => fieldValue(map, field, values));
-    const value = fields.reduce((word, { field, raw }) => withField(word, field, raw), register.reserved ?? 0);
+    const value = fields
+      .filter(({ field }) => isPlaced(field))
+      .reduce((word, { field, raw }) => withField(word, field, raw), register.reserved ?? 0);
     return { register, value, fields };
   });
 }

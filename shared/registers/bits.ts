@@ -32,9 +32,15 @@ export function withField(word: number, field: Field, raw: number): number {
   return above + raw * 2 ** field.low + below;
 }
 
+/** Whether a field has its bits in a register of 32 bits; one under edit may not. */
+export const isPlaced = ({ high, low }: Pick<Field, 'high' | 'low'>): boolean =>
+  Number.isInteger(high) && Number.isInteger(low) && low >= 0 && low <= high && high < 32;
+
 /** Value of a register after reset: its fields' reset values, and the reserved bits between them. */
 export const resetWord = ({ reserved, fields }: Register): number =>
-  fields.reduce((word, field) => withField(word, field, rawBits(BigInt(field.reset ?? 0), field)), reserved ?? 0);
+  fields
+    .filter(isPlaced)
+    .reduce((word, field) => withField(word, field, rawBits(BigInt(field.reset ?? 0), field)), reserved ?? 0);
 
 export const wordBitsOf = ({ wordBits }: RegisterMap): number => wordBits ?? 32;
 

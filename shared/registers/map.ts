@@ -43,7 +43,11 @@ function offsetFaults({ registers }: RegisterMap, wordBits: number): Finding[] {
     const at = `${name} is at offset ${hexText(Math.max(0, offset || 0), 16)}`;
     if (!Number.isInteger(offset) || offset < 0 || offset % bytes !== 0) {
       return [
-        offsetFinding('Its offset is not aligned', `${at}; a register of ${wordBits} bits takes ${bytes}.`, index),
+        offsetFinding(
+          'Its offset is not aligned',
+          `${at}; a register of ${wordBits} bits takes ${bytes} bytes.`,
+          index,
+        ),
       ];
     }
     if (first === index) return [];
@@ -51,6 +55,24 @@ function offsetFaults({ registers }: RegisterMap, wordBits: number): Finding[] {
       offsetFinding('Two registers share an offset', `${at}, where ${registers[first]?.name} is already.`, index),
     ];
   });
+}
+
+/** Every address of the registers within 64 bits, and the base on a register's boundary. */
+function addressFaults({ registers }: RegisterMap, wordBits: number, baseAddress: string | undefined): Finding[] {
+  if (baseAddress === undefined || !/^0x[0-9a-f]{1,16}$/i.test(baseAddress)) return [];
+  const base = BigInt(baseAddress);
+  const bytes = wordBits / 8;
+  const last = BigInt(Math.max(0, ...registers.map(({ offset }) => Math.floor(offset) || 0)));
+  const within = base + last + BigInt(bytes) <= 1n << 64n;
+  if (registers.length === 0 || (within && base % BigInt(bytes) === 0n)) return [];
+  return [
+    mapFinding({
+      slug: 'map.address',
+      title: within ? 'The base address is not aligned' : 'The addresses end beyond 64 bits',
+      reason: `The base address is ${baseAddress}; a register of ${wordBits} bits takes ${bytes} bytes.`,
+      fields: [''],
+    }),
+  ];
 }
 
 const gainNames = ['proportional.mantissa', 'proportional.shift', 'integral.mantissa', 'integral.shift'];
@@ -80,12 +102,15 @@ function unboundFindings(map: RegisterMap): Finding[] {
 /**
  * What is wrong with a register map by itself, whatever plan is written through it: failing findings first.
  * `fields` and `change.pointer` are JSON pointers into the map. A map with a failing finding makes no header.
+ *
+ * @param baseAddress hexadecimal; checked with the offsets where it is given
  */
-export function mapFindings(map: RegisterMap): Finding[] {
+export function mapFindings(map: RegisterMap, baseAddress?: string): Finding[] {
   const wordBits = wordBitsOf(map);
   return bySeverity([
     ...nameFindings(map),
     ...offsetFaults(map, wordBits),
+    ...addressFaults(map, wordBits, baseAddress),
     ...map.registers.flatMap((register, index) => [
       ...reservedFault(register, index, wordBits),
       ...fieldsFindings(register, index, wordBits),

@@ -129,6 +129,13 @@ describe('configHeader', () => {
     expect(lines).toEqual(['18446744073709551615', '9223372036854775807', '-2147483648', '-6', '6', digest]);
   });
 
+  it('gives a status register an address and no value', () => {
+    const header = configHeader(variants['a map of status registers']);
+    expect(header).toContain('CVD_STATUS_ADDR   UINT32_C(0x40010000)');
+    expect(header).not.toContain('CVD_STATUS_VALUE');
+    expect(header).toContain('#define CVD_WRITE_COUNT UINT32_C(0)');
+  });
+
   it('refuses to compile where a word does not fit its field', () => {
     const narrow = withMap({
       registers: [

@@ -60,6 +60,10 @@ describe('configDocument', () => {
     expect(registers).toEqual(written);
   });
 
+  it('adds the base address to the offsets', () => {
+    expect(configDocument(input()).registers[1]).toMatchObject({ offset: '0x00004004', address: '0x40014004' });
+  });
+
   it('keeps the digits of a word beyond 2^53', () => {
     const quantity = configDocument(wide).quantities.find(({ path }) => path === 'carrier.nco.fcw');
     expect(quantity?.value).toBe('18446744073709551615');

@@ -27,6 +27,21 @@ describe('registerValues', () => {
     expect(wordOf(one(...fields))).toBe(0x5a);
   });
 
+  it('writes constants, of either sign', () => {
+    const constant = field(7, 4, { constant: -3, coding: 'signed', reset: 1 });
+    expect(wordOf(one(constant, field(3, 0, { constant: 6, reset: 1 })))).toBe(0xd6);
+  });
+
+  it('writes 0 symbols for a stage that does not end by count', () => {
+    expect(wordOf(one(field(31, 0, { quantity: 'carrier.track.untilSymbols', reset: 7 })))).toBe(0);
+  });
+
+  it('writes nothing into a field that a form has not placed yet', () => {
+    expect(wordOf(one(field(3, 9, { constant: 1 }), field(40, 0, { constant: 1 }), field(1, 0, { constant: 2 })))).toBe(
+      2,
+    );
+  });
+
   it('takes the codes of the hardware where they differ', () => {
     const codes = { floor: 0, nearest: 3, convergent: 1 };
     expect(wordOf(one(field(1, 0, { quantity: 'carrier.rounding', codes })))).toBe(1);

@@ -86,6 +86,15 @@ describe('mapFindings', () => {
     expect(slugs(map(register('A', 8, []), register('B', 8, [])))).toEqual(['map.offset']);
   });
 
+  it('wants the base address aligned, and the last register within 64 bits', () => {
+    const at = (offset: number) => map(register('A', offset, []));
+    const slugsAt = (base: string, offset: number) => mapFindings(at(offset), base).map(({ slug }) => slug);
+    expect(slugsAt('0x40010000', 0x4000)).toEqual([]);
+    expect(slugsAt('0x40010002', 0x4000)).toEqual(['map.address']);
+    expect(slugsAt('0xFFFFFFFFFFFFFFF8', 4)).toEqual([]);
+    expect(slugsAt('0xFFFFFFFFFFFFFFF8', 8)).toEqual(['map.address']);
+  });
+
   it.each([
     ['map.constant', field('a', 3, 0, { constant: 16 })],
     ['map.constant', field('a', 3, 0, { constant: -1 })],
