@@ -10,7 +10,7 @@ import { carrierWords } from '../fixed-point/words';
 import type { CarrierWords } from '../fixed-point/words';
 import type { CompleteCarrier, CompletePlan } from '../plan/complete';
 import { askedOffsetHz } from '../budget/loop-acquisition';
-import { solveStages, stageDesigns, wordStages } from './loop-design';
+import { requireLimit, solveStages, stageDesigns, wordStages } from './loop-design';
 import type { SolvedStages } from './loop-design';
 import { averagedSymbols } from './stage-loop';
 import type { StageLoop } from './stage-loop';
@@ -26,6 +26,7 @@ export function carrierLoop(plan: CompletePlan, carrier: CompleteCarrier): LoopD
   const stages = solveStages('carrier', carrier, signal.symbolRateBd);
   const detectorGain = averagedSymbols(carrier.updateInterval) * model.gain;
   const words = carrierWords({ signal, carrier, detectorGain, stages: wordStages(stages) });
+  requireLimit(words, '/carrier/arithmetic/integratorLimitHz');
   const oscillatorGain = carrierOscillatorGain(words);
   const designs = stageDesigns({
     stages,

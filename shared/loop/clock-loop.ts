@@ -1,4 +1,5 @@
 import type { LoopDesign } from '../model/design';
+import { clockHeadroom } from '../budget/clock-headroom';
 import { clockAcquisition } from '../budget/loop-acquisition';
 import { clockDetector } from '../detectors/clock';
 import { sCurve } from '../detectors/detector';
@@ -7,7 +8,7 @@ import { clockGains, clockOscillatorGain } from '../fixed-point/loop-scale';
 import { clockWords } from '../fixed-point/words';
 import type { ClockWords } from '../fixed-point/words';
 import type { CompleteClock, CompletePlan } from '../plan/complete';
-import { solveStages, stageDesigns, wordStages } from './loop-design';
+import { requireLimit, solveStages, stageDesigns, wordStages } from './loop-design';
 import { averagedSymbols } from './stage-loop';
 
 /** The clock recovery loop of a plan, worked out. */
@@ -20,6 +21,7 @@ export function clockLoop(plan: CompletePlan, clock: CompleteClock): LoopDesign 
   const counted = averagedSymbols(clock.updateInterval);
   const detectorGain = counted * model.gain;
   const words = clockWords({ signal, clock: realisable(clock), detectorGain, stages: wordStages(stages) });
+  requireLimit(words, '/clock/arithmetic/integratorLimitPpm');
   const oscillatorGain = clockOscillatorGain(words, samplesPerSymbol);
   const designs = stageDesigns({
     stages,
@@ -41,7 +43,12 @@ export function clockLoop(plan: CompletePlan, clock: CompleteClock): LoopDesign 
       curve: sCurve(model, counted),
     },
     stages: designs,
-    headroom: [],
+    headroom: clockHeadroom({
+      words,
+      stageNames: clock.stages.map(({ name }) => name),
+      offsetPpm: 2 * plan.environment.clockTolerancePpm,
+      samplesPerSymbol,
+    }),
     budget: null,
     acquisition: clockAcquisition({
       plan,

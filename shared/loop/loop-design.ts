@@ -1,6 +1,8 @@
 import type { StageDesign, StageWords } from '../model/design';
-import type { StageGainWords } from '../model/words';
+import type { StageGainWords, StoredInteger } from '../model/words';
 import type { CompleteCarrier, CompleteClock } from '../plan/complete';
+import { toNumber } from '../fixed-point/format';
+import { ParameterError } from '../parameter-error';
 import { linearLoop } from './linear-loop';
 import type { LoopGains } from './linear-loop';
 import { stageDesign } from './stage-design';
@@ -33,6 +35,12 @@ export const wordStages = ({ wanted, solved }: SolvedStages) =>
     untilSymbols: stage.until?.symbols ?? null,
     lockThreshold: stage.until?.lockMetric ?? null,
   }));
+
+/** @throws {ParameterError} when a limit is so small that its word is 0, which would hold the integrator still */
+export function requireLimit({ integratorLimit }: { integratorLimit: StoredInteger | null }, pointer: string): void {
+  if (integratorLimit === null || toNumber(integratorLimit) > 0) return;
+  throw new ParameterError(pointer, 'the limit is less than one integrator LSB; raise it or add guard bits');
+}
 
 export interface StageDesignsInput {
   stages: SolvedStages;
