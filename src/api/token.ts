@@ -47,8 +47,9 @@ export async function renewToken(stale?: string): Promise<boolean> {
 }
 
 async function oneTabAtATime(work: () => Promise<boolean>): Promise<boolean> {
-  if (!('locks' in navigator)) return work();
-  return navigator.locks.request('keepstep-session', work);
+  // Absent outside a secure context: there, tabs take their chance with the server's grace for a used cookie.
+  const locks = navigator.locks as LockManager | null | undefined;
+  return locks ? locks.request('keepstep-session', work) : work();
 }
 
 async function refresh(): Promise<boolean> {

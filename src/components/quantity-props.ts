@@ -13,6 +13,8 @@ export interface QuantityProps {
   integer?: boolean | undefined;
   /** Fewest digits behind the point. */
   decimals?: number | undefined;
+  /** Writes the prefix behind the number, `10 k`: for tables, whose head names the unit. */
+  prefixInside?: boolean | undefined;
   /** Most digits shown; the value keeps all it has. */
   significant?: number | undefined;
   min?: number | undefined;

@@ -50,9 +50,10 @@ export function useQuantityInput(props: QuantityProps, emit: QuantityEmits, labe
 
   function type(typed: string) {
     escapes = 0;
+    const marked = fault.value !== undefined;
     text.value = typed;
     report();
-    rested.value = rested.value && checked.value.fault !== undefined;
+    rested.value = marked && checked.value.fault !== undefined;
     clearTimeout(rest);
     rest = setTimeout(() => (rested.value = true), restBeforeFault);
   }
@@ -118,9 +119,12 @@ export function useQuantityInput(props: QuantityProps, emit: QuantityEmits, labe
   return { text, fault, understood, unitShown, edited, wasText, restore, on };
 }
 
-function writtenOf({ modelValue, unit = '', symmetric, decimals, significant }: QuantityProps) {
+function writtenOf({ modelValue, unit = '', symmetric, decimals, significant, prefixInside }: QuantityProps) {
   if (modelValue === undefined) return { number: '', unit: unit as string, exponent: undefined };
-  return formatQuantity(modelValue, { unit, symmetric, significant, least: decimals, groupFrom: 5 });
+  const parts = formatQuantity(modelValue, { unit, symmetric, significant, least: decimals, groupFrom: 5 });
+  if (!prefixInside || parts.unit === unit) return parts;
+  // In a table the head names the unit once: each cell carries its own prefix, and a bare number is in the unit itself.
+  return { number: `${parts.number} ${parts.unit.slice(0, -unit.length)}`, unit, exponent: 0 };
 }
 
 function wasSentence({ was, wasName, unit = '', symmetric, decimals, significant }: QuantityProps): string {
