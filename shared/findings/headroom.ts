@@ -94,7 +94,8 @@ const limitOf = ({ loop }: LoopView): number | undefined => {
 
 const raise = (pointer: string, no: string, value: number, missing: number): Remedy => {
   const wanted = value + Math.ceil(missing - fractionOfBits);
-  return setTo(no, pointer, wanted, say(wanted));
+  // The sheet shows the full scale itself, not its logarithm.
+  return setTo(no, pointer, wanted, `±${say(2 ** wanted)}`);
 };
 
 /** Headroom of each node of the datapath at its worst stage. */
