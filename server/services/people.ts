@@ -78,7 +78,7 @@ export function peopleService({ db, clock }: Context, passwords: PasswordsServic
         const person = await people.find(id);
         if (!person) throw notFound('person');
         await keepOneAdmin(person, change, trx);
-        if (!(await people.update(id, version, change))) throw stale('person', person);
+        if (!(await people.update(id, version, change))) throw stale('person', await people.find(id));
         if (change.active === false) await sessions.revokeAll(id, clock());
         await audit.append({
           at: clock(),

@@ -61,7 +61,9 @@ async function openDraft(id: number, version: number, all: Repositories): Promis
   const release = await all.releases.find(id);
   if (!release) throw notFound('release');
   if (release.state !== 'draft') throw conflict('A frozen release cannot be changed.');
-  if (!(await all.releases.raiseVersion(id, version))) throw stale('release', withoutTargetId(release));
+  if (!(await all.releases.raiseVersion(id, version))) {
+    throw stale('release', withoutTargetId((await all.releases.find(id))!));
+  }
   return release;
 }
 

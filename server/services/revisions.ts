@@ -1,6 +1,7 @@
 import { carrierTables } from '../../shared/fixed-point/tables';
-import type { CarrierWords, Design } from '../../shared/model/design';
+import type { Design } from '../../shared/model/design';
 import type { Plan } from '../../shared/model/plan';
+import type { CarrierWords } from '../../shared/model/words';
 import type { TargetSnapshot } from '../../shared/files/file-input';
 import { inTransaction } from '../db';
 import { notFound, stale } from '../errors';
@@ -68,10 +69,9 @@ export function revisionsService({ db, clock }: Context) {
         const design = designOf(plan, target.registerMap);
         const description = design.plan;
         const at = clock();
-        const stored = await all.plans.find(planId);
-        if (!stored) throw notFound('plan');
+        if (!(await all.plans.find(planId))) throw notFound('plan');
         if (!(await all.plans.update(planId, version, description, target.id, at))) {
-          throw stale('plan', await stateOf(stored, all));
+          throw stale('plan', await stateOf((await all.plans.find(planId))!, all));
         }
         const number = (await all.revisions.newestNumber(planId)) + 1;
         const about = { planId, number, targetId: target.id, note, description, savedBy: by.id, at };
