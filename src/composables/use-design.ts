@@ -63,8 +63,8 @@ export function useDesign(plan: Ref<DraftPlan>, whole: Ref<boolean>) {
 
   const state = computed<Freshness>(() => {
     if (!whole.value || faults.value.length > 0) return design.value ? 'stale' : 'none';
-    if (unanswered.value) return 'failed';
-    return late.value ? 'working' : design.value ? 'fresh' : 'none';
+    if (late.value) return 'working';
+    return unanswered.value ? 'failed' : design.value ? 'fresh' : 'none';
   });
   return { design, faults, unanswered, state, ask };
 }

@@ -5,6 +5,7 @@ import { numberText, quantityText } from '../../../shared/quantities/format';
 import { quantitiesOf } from '../../../shared/registers/quantities';
 import { fieldLabel, fieldText } from './field-text';
 import { wordsOf } from './register-drawings';
+import { countsOf } from './verdict-of';
 
 /** One side of a comparison: a revision, or the draft. */
 export interface CompareSide {
@@ -45,13 +46,17 @@ const meaningRows = (before: CompareSide, after: CompareSide): CompareRow[] =>
 function meaningOf(design: Design): Said {
   const loops = [design.carrier, design.clock].filter((loop) => loop !== undefined);
   const prefix = (loop: LoopDesign) => (loops.length < 2 ? '' : loop === design.carrier ? 'carrier ' : 'clock ');
-  return new Map([...loops.flatMap((loop) => loopMeaning(loop, prefix(loop))), ['Findings', countsText(design)]]);
+  return new Map([...loops.flatMap((loop) => loopMeaning(loop, prefix(loop))), ...countRows(design)]);
 }
 
-const countsText = ({ findings }: Design): string =>
-  (['fail', 'caution', 'pass'] as const)
-    .map((severity) => `${findings.filter((finding) => finding.severity === severity).length} ${severity}`)
-    .join(', ');
+const countRows = (design: Design): [string, string][] => {
+  const { fail, caution, pass } = countsOf(design);
+  return [
+    ['Findings that fail', String(fail)],
+    ['Findings of caution', String(caution)],
+    ['Findings that pass', String(pass)],
+  ];
+};
 
 function loopMeaning(loop: LoopDesign, prefix: string): [string, string][] {
   const { largestOffsetHz, largestOffsetPpm } = loop.acquisition;

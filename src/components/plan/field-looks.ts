@@ -74,7 +74,7 @@ const looks: Record<string, Partial<FieldLook>> = {
     options: [
       { value: 'saturate', label: 'saturate' },
       { value: 'wrap', label: 'wrap' },
-      { value: 'each', label: 'each node' },
+      { value: 'each', label: 'each' },
     ],
   },
   'lockDetector/threshold': { decimals: 2 },

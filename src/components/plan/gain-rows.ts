@@ -17,8 +17,8 @@ export interface GainWordCell {
 export interface GainRow {
   label: string;
   unit: string;
-  /** One cell for each stage. */
-  cells: (GainCell | GainWordCell)[];
+  /** One cell for each stage; null where a number belongs to the loop as a whole and stands under the last stage. */
+  cells: (GainCell | GainWordCell | null)[];
 }
 
 export interface GainGroup {
@@ -43,6 +43,7 @@ export function gainGroups(loop: LoopDesign): GainGroup[] {
     { title: 'Gains of the loop', rows: loopGainRows(stages) },
     { title: 'Gains, per detector unit', rows: detectorGainRows(stages, loop.detector.gain) },
     { title: 'Words', rows: wordRows(stages) },
+    { title: 'Detector and range', rows: rangeRows(loop) },
   ];
 }
 
@@ -73,7 +74,7 @@ const decibels = (ratio: number | null): number | null => (ratio === null ? null
 
 /** Rows that no stage has a value for are left out: ζ of a third-order loop. */
 const present = (rows: GainRow[]): GainRow[] =>
-  rows.filter(({ cells }) => cells.some((cell) => 'mantissa' in cell || cell.value !== null));
+  rows.filter(({ cells }) => cells.some((cell) => cell && ('mantissa' in cell || cell.value !== null)));
 
 function askedRows(stages: readonly StageDesign[]): GainRow[] {
   return present([
@@ -141,8 +142,42 @@ function words(
   return cells.length === stages.length ? [{ label, unit: '', cells }] : [];
 }
 
+type Whole = Omit<GainCell, 'value'> & { value: number | null };
+
+/** What belongs to the loop and to no single stage: the slope at lock, and how far off it may start. */
+function rangeRows({ detector, stages, acquisition, resolutionHz }: LoopDesign): GainRow[] {
+  const { unambiguousHz, falseLockSpacingHz, offsetHz, largestOffsetHz, lockInHz, pullInSymbols } = acquisition;
+  const { offsetPpm, largestOffsetPpm } = acquisition;
+  const put = (label: string, unit: string, cell: Whole): GainRow => ({
+    ...{ label, unit },
+    cells: stages.map((_, index) => (index === stages.length - 1 ? cell : null)),
+  });
+  const hertz = (label: string, value: number | null): GainRow => {
+    const { value: shown, unit } = inPrefix(value);
+    return put(label, unit, { value: shown, decimals: 2 });
+  };
+  return present([
+    put('Slope at lock Kd', '', { value: detector.gain, decimals: 4 }),
+    hertz('One LSB', resolutionHz),
+    hertz('Unambiguous below', unambiguousHz),
+    hertz('False locks every', falseLockSpacingHz),
+    hertz('Offset to expect', offsetHz),
+    hertz('Offset held', largestOffsetHz),
+    put('Rate error to expect', 'ppm', { value: offsetPpm, decimals: 1 }),
+    put('Rate error held', 'ppm', { value: largestOffsetPpm, decimals: 1 }),
+    hertz('Lock-in, estimate', lockInHz),
+    put('Pull-in, estimate', 'symbols', { value: pullInSymbols || null, decimals: 0 }),
+  ]);
+}
+
+function inPrefix(value: number | null): { value: number | null; unit: string } {
+  const [scale, unit] = prefixes.find(([at]) => Math.abs(value ?? 0) >= at) ?? [1, 'Hz'];
+  return { value: scaled(value, scale), unit };
+}
+
 /** Characters that a cell sets behind its point, the point and the exponent included: what aligns a column. */
-export function widthBehindPoint(cell: GainCell | GainWordCell): number {
+export function widthBehindPoint(cell: GainCell | GainWordCell | null): number {
+  if (!cell) return 0;
   if ('mantissa' in cell) return 3;
   if (cell.exponent) return (cell.significant ?? 1) + 3;
   return cell.decimals ? cell.decimals + 1 : 0;

@@ -29,3 +29,10 @@ function foldsAround(place: HTMLElement): HTMLDetailsElement[] {
     folds.push(fold);
   return folds;
 }
+
+/** Brings the first finding into view; the list begins with what fails. */
+export function goToFirstFinding(): void {
+  const title = document.querySelector<HTMLElement>('.fd h3');
+  title?.scrollIntoView({ block: 'center' });
+  title?.focus({ preventScroll: true });
+}

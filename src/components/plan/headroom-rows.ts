@@ -1,10 +1,10 @@
 import type { HeadroomNode, LoopDesign } from '../../../shared/model/design';
-import { quantityText } from '../../../shared/quantities/format';
+import { numberText, quantityText } from '../../../shared/quantities/format';
 
 export interface BitsRow {
   label: string;
   bits: number;
-  /** Bits that the signal reaches, the sign apart. */
+  /** Bits that the signal reaches, the guard bits counted, the sign not. */
   reached: number;
   guard: number;
   overflow: boolean;
@@ -38,26 +38,41 @@ const names: Record<HeadroomNode['node'], string> = {
 
 const ahead: readonly HeadroomNode['node'][] = ['sample', 'error'];
 
+export interface HeadroomContext {
+  /** What the words behind the gains count: “NCO” or “Counter”. */
+  oscillator: string;
+  esN0Db: number;
+}
+
 /**
  * The nodes of a loop as rows of bits: those before the gains in their own units, those behind them with their weights
  * in line. Of a node that every stage has, the stage with the least headroom is shown.
- *
- * @param oscillator what the words behind the gains count: “NCO” or “Counter”
  */
-export function headroomGroups({ headroom, resolutionHz }: LoopDesign, oscillator: string): BitsGroup[] {
-  const tightest = worstOfEachNode(headroom);
+export function headroomGroups(loop: LoopDesign, { oscillator, esN0Db }: HeadroomContext): BitsGroup[] {
+  const tightest = worstOfEachNode(loop.headroom);
   const before = tightest.filter(({ node }) => ahead.includes(node));
   const behind = tightest.filter(({ node }) => !ahead.includes(node));
   const top = Math.max(0, ...behind.map(bitsAboveGuard));
+  const label = (node: HeadroomNode) => labelOf(node, loop, esN0Db);
   const groups = [
-    { heading: 'Detector units', rows: before.map((node) => bitsRow(node, 0)), axis: [] },
+    { heading: 'Detector units', rows: before.map((node) => bitsRow(node, label(node), 0)), axis: [] },
     {
       heading: `${oscillator} units, weights in line`,
-      rows: behind.map((node) => bitsRow(node, top - bitsAboveGuard(node))),
-      axis: weights(top, Math.max(0, ...behind.map(guardOf)), resolutionHz),
+      rows: behind.map((node) => bitsRow(node, label(node), top - bitsAboveGuard(node))),
+      axis: weights(top, Math.max(0, ...behind.map(guardOf)), loop.resolutionHz),
     },
   ];
   return groups.filter(({ rows }) => rows.length > 0);
+}
+
+/** The node and the signal that reaches it: “Error, 4σ at 10 dB”, “Integrator at ±77.5 kHz”, “Proportional, track”. */
+function labelOf({ node, stage }: HeadroomNode, { acquisition }: LoopDesign, esN0Db: number): string {
+  if (stage) return `${names[node]}, ${stage}`;
+  if (ahead.includes(node)) return `${names[node]}, 4σ at ${numberText(esN0Db)} dB`;
+  const { offsetHz, offsetPpm } = acquisition;
+  if (node !== 'integrator') return names[node];
+  if (offsetHz !== null) return `${names[node]} at ±${quantityText(offsetHz, { unit: 'Hz', significant: 4 })}`;
+  return offsetPpm === null ? names[node] : `${names[node]} at ±${numberText(offsetPpm)} ppm`;
 }
 
 function worstOfEachNode(headroom: readonly HeadroomNode[]): HeadroomNode[] {
@@ -72,17 +87,10 @@ function worstOfEachNode(headroom: readonly HeadroomNode[]): HeadroomNode[] {
 const guardOf = (node: HeadroomNode): number => node.guardBits ?? 0;
 const bitsAboveGuard = (node: HeadroomNode): number => node.widthBits - guardOf(node);
 
-function bitsRow(node: HeadroomNode, offset: number): BitsRow {
-  const { widthBits: bits, headroomBits: headroom } = node;
-  const free = Math.max(0, Math.floor(headroom));
-  return {
-    label: node.stage ? `${names[node.node]}, ${node.stage}` : names[node.node],
-    ...{ bits, guard: guardOf(node), headroom, offset },
-    reached: Math.max(0, bits - 1 - free - guardOf(node)),
-    overflow: headroom < 0,
-    note: `${bits} bits`,
-  };
-}
+const bitsRow = (node: HeadroomNode, label: string, offset: number): BitsRow => ({
+  ...{ label, bits: node.widthBits, reached: node.reachedBits, guard: guardOf(node), offset },
+  ...{ overflow: node.headroomBits < 0, headroom: node.headroomBits, note: `${node.widthBits} bits` },
+});
 
 /** A mark at the top weight, at each eighth bit and at the lowest guard bit, with its frequency where it has one. */
 function weights(top: number, guard: number, resolutionHz: number | null): BitsAxisMark[] {

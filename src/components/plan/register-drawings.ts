@@ -14,7 +14,7 @@ export interface RegisterDrawing {
   width: number;
   /** `selected`: the draft writes something else into the field than the revision did. */
   fields: { name: string; high: number; low: number; value: string; selected: boolean }[];
-  /** Holds gain words, which people compare first. */
+  /** Holds gain words of the stage in use, which people compare first. */
   gains: boolean;
 }
 
@@ -31,7 +31,11 @@ export interface RegisterSource {
 export function registerDrawings({ map, baseAddress, design, before }: RegisterSource): RegisterDrawing[] {
   const old = new Map(before && valuesOf(map, before).map((value) => [value.register.name, value]));
   const bits = wordBitsOf(map);
-  return valuesOf(map, design).map((value) => drawing(value, old.get(value.register.name), baseAddress, bits));
+  const inUse = stageInUse(design);
+  return valuesOf(map, design).map((value) => ({
+    ...drawing(value, old.get(value.register.name), baseAddress, bits),
+    gains: value.fields.some(({ quantity }) => quantity?.path.startsWith(`${inUse}.`)),
+  }));
 }
 
 /** Words of a design by register name, in the order of the map. */
@@ -41,7 +45,15 @@ export const wordsOf = (map: RegisterMap, design: Design): ReadonlyMap<string, s
 const valuesOf = (map: RegisterMap, design: Design): RegisterValue[] =>
   registerValues(map, quantitiesOf({ plan: design.plan, design }));
 
-function drawing(now: RegisterValue, old: RegisterValue | undefined, base: string, width: number): RegisterDrawing {
+/** Path of the last stage of the carrier loop, of the clock loop in a plan without one. */
+function stageInUse({ carrier, clock }: Design): string {
+  const stages = (carrier ?? clock)?.stages ?? [];
+  return `${carrier ? 'carrier' : 'clock'}.${stages.at(-1)?.name}`;
+}
+
+type Drawing = Omit<RegisterDrawing, 'gains'>;
+
+function drawing(now: RegisterValue, old: RegisterValue | undefined, base: string, width: number): Drawing {
   const { register, value, fields } = now;
   return {
     name: register.name,
@@ -53,7 +65,6 @@ function drawing(now: RegisterValue, old: RegisterValue | undefined, base: strin
       ...{ name: field.field.name, high: field.field.high, low: field.field.low, value: held(field) },
       selected: old !== undefined && old.fields[index]?.raw !== field.raw,
     })),
-    gains: fields.some(({ quantity }) => /\.(proportional|integral)\./.test(quantity?.path ?? '')),
   };
 }
 
