@@ -1,3 +1,5 @@
+const secondsSince = (begin) => `${((performance.now() - begin) / 1000).toFixed(1)} s`;
+
 /**
  * Says what is being done and, once it is done, the time it took: `npm packages … 41.2 s`.
  *
@@ -11,7 +13,7 @@ export async function step(label, work) {
   const begin = performance.now();
   try {
     const answer = await work();
-    console.log(`${((performance.now() - begin) / 1000).toFixed(1)} s`);
+    console.log(secondsSince(begin));
     return answer;
   } catch (error) {
     console.log('failed');
@@ -27,4 +29,19 @@ export async function step(label, work) {
  */
 export function nothingToDo(label, state) {
   console.log(`${label} … ${state}`);
+}
+
+/**
+ * A step whose own program has the terminal meanwhile: its line comes when it is done, and none when it failed.
+ *
+ * @template T
+ * @param {string} label
+ * @param {() => Promise<T | undefined>} work answers nothing when it failed
+ * @returns {Promise<T | undefined>}
+ */
+export async function stepWithOutput(label, work) {
+  const begin = performance.now();
+  const answer = await work();
+  if (answer !== undefined) console.log(`${label} … ${secondsSince(begin)}`);
+  return answer;
 }
