@@ -1,5 +1,5 @@
 import { ParameterError } from '../parameter-error';
-import { bisect } from '../math/root-search';
+import { bisect, largestBetween } from '../math/root-search';
 import { multiplyModulo, pairOf, powerModulo, reciprocalModulo } from '../math/pole-pair';
 import type { PolePair, Remainder } from '../math/pole-pair';
 import { dominantPair } from './dominant-pair';
@@ -113,17 +113,14 @@ export function largestTheta(shape: LoopShape, start: number): number {
 
 /** Where the bandwidth stops rising with θ: it turns, or its pole pair ends, or the loop is unstable. */
 function peak(bandwidthAt: (theta: number) => number, start: number): number {
-  let low = start;
-  while (!(bandwidthAt(low) > 0) && low > 1e-9) low /= 2;
-  // Down to where the bandwidth is sure to rise, then up again step by step.
-  while (low > start / 64 && bandwidthAt(low / 2) > bandwidthAt(low)) low /= 2;
-  let [reached, step] = [bandwidthAt(low), 1.15];
-  while (step - 1 > 1e-9) {
-    const next = bandwidthAt(low * step);
-    if (next > reached) [low, reached] = [low * step, next];
-    else step = 1 + (step - 1) / 2;
-  }
-  return low;
+  const known = (theta: number): number => bandwidthAt(theta) || 0;
+  const ratio = 1.15;
+  let top = start;
+  while (known(top) === 0 && top > 1e-9) top /= 2;
+  // Down to where the bandwidth is sure to rise, then up again until it does not.
+  while (top > start / 64 && known(top / 2) > known(top)) top /= 2;
+  while (known(top * ratio) > known(top)) top *= ratio;
+  return largestBetween(known, top / ratio, top * ratio).x;
 }
 
 /** The θ in (0, upper] at which a rising bandwidth is the wanted one, by bracketed false position in logarithms. */
