@@ -1,4 +1,4 @@
-import { Ajv2020, type ValidateFunction } from 'ajv/dist/2020';
+import { Ajv2020, type ValidateFunction } from 'ajv/dist/2020.js';
 import designRequest from '../schemas/design-request.schema.json';
 import design from '../schemas/design.schema.json';
 import draft from '../schemas/draft.schema.json';
