@@ -4,18 +4,8 @@ export default defineConfig(() => {
   const apiPort = process.env.API_PORT ?? '8081';
   return {
     boot: ['session'],
-    css: [
-      '~@fontsource/noto-sans/latin-400.css',
-      '~@fontsource/noto-sans/latin-600.css',
-      '~@fontsource/noto-sans/greek-400.css',
-      '~@fontsource/noto-sans/greek-600.css',
-      '~@fontsource/noto-sans-mono/latin-400.css',
-      '~@fontsource/noto-sans-mono/latin-600.css',
-      '~@fontsource/noto-sans-mono/greek-400.css',
-      '~@fontsource/noto-sans-mono/greek-600.css',
-      'app.scss',
-    ],
-    extras: [], // fonts by @fontsource, icons drawn by us: nothing from a font set
+    css: ['app.scss'],
+    extras: [], // fonts in src/css/_fonts.scss, icons drawn by us: nothing from a font set
     build: {
       target: { browser: ['es2022'], node: 'node20' },
       vueRouterMode: 'history',

@@ -48,7 +48,8 @@ function rangeSentence(value: number, bounds: Bounds): string {
 /** A slip of a prefix or of a percent sign that would bring the value into a range with two ends. */
 function likelyIntent(value: number, bounds: Bounds): number | undefined {
   if (bounds.min === undefined || bounds.max === undefined) return undefined;
-  const slips = bounds.unit === '' ? [1e-2] : [1e-3, 1e3, 1e-6, 1e6];
+  // 35 in a ratio is 35 %; 1.35 is a slip of another kind, and which one cannot be known.
+  const slips = bounds.unit !== '' ? [1e-3, 1e3, 1e-6, 1e6] : value >= 5 ? [1e-2] : [];
   const scaled = bounds.unit === '' || ['Hz', 'Bd', 'Hz/s'].includes(bounds.unit);
   return scaled ? slips.map((slip) => value * slip).find((meant) => meant !== 0 && !outside(meant, bounds)) : undefined;
 }

@@ -14,7 +14,11 @@ const restBeforeFault = 600;
  * @param props live props of the field
  * @param label how the sentences call the field
  */
-export function useQuantityInput(props: QuantityProps, emit: QuantityEmits, label: () => string) {
+export function useQuantityInput(
+  props: QuantityProps & { reason?: string | undefined },
+  emit: QuantityEmits,
+  label: () => string,
+) {
   const written = computed(() => writtenOf(props));
   const text = ref(props.typed ?? written.value.number);
   // What the unit beside the field is. It stands still while somebody types: 2 on the way to 27.5 is 2 MBd.
@@ -30,7 +34,7 @@ export function useQuantityInput(props: QuantityProps, emit: QuantityEmits, labe
     return checkQuantity(text.value, field, { ...props, unit, label: label() });
   });
   const edited = computed(() => props.wasName !== undefined && props.modelValue !== props.was);
-  const fault = computed(() => (rested.value && !props.disabled ? checked.value.fault : undefined));
+  const fault = computed(() => (rested.value && !props.disabled && !props.reason ? checked.value.fault : undefined));
   const understood = computed(() => {
     const { reading } = checked.value;
     if (!focused.value || reading.kind !== 'value') return undefined;

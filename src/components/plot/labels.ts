@@ -27,7 +27,13 @@ const enough = 26;
 export function placeLabels(data: PlotData, scales: PlotScales): Label[] {
   const traces = data.series.map((series) => traceOf(series.points, scales));
   const placed: Label[] = [];
-  const cost = (label: Label, own?: number) => clearance(boxOf(label), traces, scales, placed, data.markers, own);
+  const cost = (label: Label, own?: number) =>
+    Math.min(
+      clearance(boxOf(label), traces, scales, placed, data.markers, own),
+      ...data.limits
+        .filter(({ label: text }) => text !== label.text)
+        .map((limit) => apartFrom(limit, boxOf(label), scales)),
+    );
   const put = (candidates: readonly Label[], own?: number) => {
     const inside = candidates.filter((label) => isInside(boxOf(label), scales));
     const best = inside.map((label) => ({ label, free: cost(label, own) })).sort((a, b) => b.free - a.free)[0];
@@ -70,6 +76,13 @@ function clearance(
     return apart(box, { x0: px - 4, x1: px + 4, y0: py - 4, y1: py + 4 });
   });
   return Math.min(enough, ...curves, ...labels.map((gap) => 2 * gap), ...marks);
+}
+
+/** A label of something else must not stand on a limit line. */
+function apartFrom({ at, axis }: Limit, box: Box, { x, y, left, right, top, bottom }: PlotScales): number {
+  const upright = axis === 'x';
+  const line = upright ? { x0: x(at), x1: x(at), y0: top, y1: bottom } : { x0: left, x1: right, y0: y(at), y1: y(at) };
+  return apart(box, line);
 }
 
 const apart = (a: Box, b: Box): number =>
