@@ -14,6 +14,8 @@ export interface WantedGain {
 }
 
 const largestShift = 63;
+/** Above every gain there is, and near enough that differences from it stay exact. */
+const beyondAll = 2 ** 95;
 const none: GainWord = { mantissa: 0, shift: 0 };
 
 /** M·2^−s, exact in a double. */
@@ -33,7 +35,8 @@ export const gainOf = ({ mantissa, shift }: GainWord): number => mantissa * 2 **
 export function gainWord({ gain, form, mantissaBits }: WantedGain): GainWord {
   if (!Number.isFinite(gain)) throw new ParameterError('gain', 'gain must be a finite number');
   if (gain === 0) return { ...none };
-  const best = nearest(Math.abs(gain), candidates(form, mantissaBits, Math.abs(gain)));
+  const wanted = Math.min(Math.abs(gain), beyondAll);
+  const best = nearest(wanted, candidates(form, mantissaBits, wanted));
   if (best.mantissa === 0) return { ...none };
   return gain < 0 ? { ...best, mantissa: -best.mantissa } : best;
 }

@@ -24,7 +24,8 @@ export interface HeadroomInput {
 type Node = HeadroomNode['node'];
 
 /** Clock fn of the NCO, Hz. */
-export const ncoClockHz = (words: CarrierWords, symbolRateBd: number): number => words.nco.stepsPerSymbol * symbolRateBd;
+export const ncoClockHz = (words: CarrierWords, symbolRateBd: number): number =>
+  words.nco.stepsPerSymbol * symbolRateBd;
 
 /** Frequency of one NCO LSB, fn/2^Wn, Hz. */
 export const frequencyResolutionHz = (words: CarrierWords, symbolRateBd: number): number =>
@@ -105,7 +106,9 @@ function integratorNode({ words, symbolRateBd, largestOffsetHz }: HeadroomInput)
   const lsbHz = frequencyResolutionHz(words, symbolRateBd) * 2 ** -words.guardBits;
   const full = 2 ** (words.integratorBits - 1);
   const range = words.integratorLimit === null ? full : toNumber(words.integratorLimit);
-  const largest = Math.max(...words.stages.map(({ integral }) => Math.abs(gainOf(integral)) * 2 ** (words.errorBits - 1)));
+  const largest = Math.max(
+    ...words.stages.map(({ integral }) => Math.abs(gainOf(integral)) * 2 ** (words.errorBits - 1)),
+  );
   return node('integrator', words.integratorBits, {
     reached: largestOffsetHz / lsbHz,
     worst: range + largest,

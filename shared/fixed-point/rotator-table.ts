@@ -33,7 +33,12 @@ export function wholeCircle({ cosine, sine }: RotatorTable): { cosine: Int32Arra
   for (let i = 0; i < 2 * octant; i++) {
     const c = i <= octant ? cosine[i]! : sine[2 * octant - i]!;
     const s = i <= octant ? sine[i]! : cosine[2 * octant - i]!;
-    [[c, s], [-s, c], [-c, -s], [s, -c]].forEach(([cos, sin], quadrant) => {
+    [
+      [c, s],
+      [-s, c],
+      [-c, -s],
+      [s, -c],
+    ].forEach(([cos, sin], quadrant) => {
       circle.cosine[i + 2 * octant * quadrant] = cos!;
       circle.sine[i + 2 * octant * quadrant] = sin!;
     });

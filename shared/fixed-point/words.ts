@@ -93,7 +93,10 @@ export function carrierWords({ signal, carrier, detectorGain, stages }: CarrierW
   requirePositive({ detectorGain });
   const shared = commonWords('/carrier', signal, carrier);
   if (nco.stepsPerSymbol % shared.updatesPerSymbol !== 0) {
-    throw new ParameterError('/carrier/nco/stepsPerSymbol', 'the NCO steps must be a multiple of the updates per symbol');
+    throw new ParameterError(
+      '/carrier/nco/stepsPerSymbol',
+      'the NCO steps must be a multiple of the updates per symbol',
+    );
   }
   if (nco.phaseBits > nco.widthBits) {
     throw new ParameterError('/carrier/nco/phaseBits', 'the phase cannot have more bits than the NCO');

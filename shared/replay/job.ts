@@ -81,7 +81,9 @@ export function assertAffordable(check: ToleranceCheck, most = mostSymbols): voi
   throw new ParameterError(
     '/trials',
     `the check runs ${grouped(perTrial * trials)} symbols, the most is ${grouped(most)}: ` +
-      (affordable > 0 ? `at most ${affordable} trials with these points and symbols` : 'ask for fewer points or symbols'),
+      (affordable > 0
+        ? `at most ${affordable} trials with these points and symbols`
+        : 'ask for fewer points or symbols'),
   );
 }
 

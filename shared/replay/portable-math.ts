@@ -5,7 +5,7 @@
 
 // ln 2 in two parts: the first has so few digits that a whole multiple of it is exact.
 const ln2High = 0.693145751953125;
-const ln2Low = 1.4286068203094172e-6;
+const ln2Low = 1.428606820309417e-6;
 
 /** e^x for |x| ≤ 700, within a few units of the last place. */
 export function exponential(x: number): number {

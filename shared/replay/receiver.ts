@@ -28,7 +28,12 @@ export const powerOf = ({ modulation }: Pick<ReplayJob, 'modulation'>): number =
  * @param look called after every block; its arrays are used again for the next
  * @returns the watch over the true phase error, at the trial's end
  */
-export function runTrial(job: ReplayJob, pointIndex: number, trial: number, look: (block: BlockView) => void): PhaseWatch {
+export function runTrial(
+  job: ReplayJob,
+  pointIndex: number,
+  trial: number,
+  look: (block: BlockView) => void,
+): PhaseWatch {
   const { words, tables, check } = job;
   const { offsetHz, esN0Db } = pointAt(job, pointIndex);
   const random = new TrialRandom({ seed: check.seed, point: pointIndex, trial });

@@ -19,7 +19,7 @@ export function symbolSource(modulation: string): SymbolSource {
   return {
     points,
     draw(random, count, indices) {
-      for (let k = 0; k < count; ) {
+      for (let k = 0; k < count;) {
         let word = random.word();
         for (let j = 0; j < perWord && k < count; j++, k++) {
           indices[k] = word & (points.length - 1);

@@ -32,7 +32,8 @@ export function clopperPearson({ successes, trials, confidence }: Proportion): I
   if (!(Number.isInteger(successes) && successes >= 0 && successes <= trials)) {
     throw new ParameterError('successes', 'successes must lie between 0 and the trials');
   }
-  if (!(confidence > 0 && confidence < 1)) throw new ParameterError('confidence', 'confidence must lie between 0 and 1');
+  if (!(confidence > 0 && confidence < 1))
+    throw new ParameterError('confidence', 'confidence must lie between 0 and 1');
   const tail = (1 - confidence) / 2;
   return {
     lower: successes === 0 ? 0 : betaQuantile(tail, successes, trials - successes + 1),

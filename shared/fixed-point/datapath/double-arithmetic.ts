@@ -1,50 +1,28 @@
-import type { Overflow } from '../format';
 import type { Rounding } from '../rounding';
 
-/** A right shift with rounding, prepared for doubles that hold the exact value. */
-export interface DoubleShift {
-  /** 2^−s. */
-  scale: number;
-  /** 2^s where a half can occur, else 0. */
-  unit: number;
-  /** 2^(s−1), else 0. */
-  half: number;
-  /** An exact half goes to the even neighbour. */
-  even: boolean;
-}
+/*
+ * Arithmetic on integers that doubles hold exactly. The usual case of each node, a floor and two comparisons, stands
+ * in the loop itself: a call that the engine does not inline costs more than the node. What is rarer is here.
+ */
 
-export function doubleShift(shift: number, rounding: Rounding): DoubleShift {
-  const rounds = shift > 0 && rounding !== 'floor';
-  return {
-    scale: 2 ** -shift,
-    unit: 2 ** shift,
-    half: rounds ? 2 ** (shift - 1) : 0,
-    even: rounds && rounding === 'convergent',
-  };
-}
+/** What rounding adds before a right shift by s: 2^(s−1), or 0 where nothing is added. */
+export const roundingHalf = (shift: number, rounding: Rounding): number =>
+  shift > 0 && rounding !== 'floor' ? 2 ** (shift - 1) : 0;
 
-/** The rounded shift of an integer held exactly in a double. */
-export function shiftDouble(value: number, { scale, unit, half, even }: DoubleShift): number {
-  const raised = value + half;
-  const rounded = Math.floor(raised * scale);
-  return even && rounded * unit === raised && rounded % 2 !== 0 ? rounded - 1 : rounded;
-}
+/** 2^s where an exact half has to go to the even neighbour, else 0. */
+export const evenUnit = (shift: number, rounding: Rounding): number =>
+  shift > 0 && rounding === 'convergent' ? 2 ** shift : 0;
 
-/** A word of W ≤ 53 bits and what happens beyond it. */
-export interface DoubleWord {
-  /** 2^(W−1). */
-  top: number;
-  wraps: boolean;
-}
+/**
+ * A rounded right shift is ⌊(x + half)·2^−s⌋; where it was an exact half and `even` is set, the result becomes even.
+ *
+ * @param raised x + half · @param rounded the floor · @param even from `evenUnit`, above 0
+ */
+export const toEven = (rounded: number, raised: number, even: number): number =>
+  rounded * even === raised && rounded % 2 !== 0 ? rounded - 1 : rounded;
 
-export const doubleWord = (widthBits: number, overflow: Overflow): DoubleWord => ({
-  top: 2 ** (widthBits - 1),
-  wraps: overflow === 'wrap',
-});
-
-/** Fits an integer held exactly in a double. */
-export function fitDouble(value: number, { top, wraps }: DoubleWord): number {
-  if (value < top && value >= -top) return value;
+/** Fits a value that lies outside a word of 2·top values around 0. */
+export function beyond(value: number, top: number, wraps: boolean): number {
   if (!wraps) return value < 0 ? -top : top - 1;
   // The remainder of two doubles is exact, however large the dividend.
   const rest = value % (2 * top);

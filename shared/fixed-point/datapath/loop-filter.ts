@@ -32,11 +32,16 @@ export function loopFilter(words: Words, outputBits: number): LoopFilter {
   const integrate = (d: bigint, stage: number): void => {
     const { integral, integral2 } = words.stages[stage]!;
     if (order === 3) {
-      acc2 = fit(acc2 + fit(scaled(d, integral2), integrator2Bits, overflow.increment2), integrator2Bits, overflow.integrator2);
+      acc2 = fit(
+        acc2 + fit(scaled(d, integral2), integrator2Bits, overflow.increment2),
+        integrator2Bits,
+        overflow.integrator2,
+      );
     }
     let increment = fit(scaled(d, integral), integratorBits, overflow.increment);
     if (order === 3) increment = fit(increment + (acc2 >> guard2), integratorBits, overflow.increment);
-    acc = limit === undefined ? fit(acc + increment, integratorBits, overflow.integrator) : clamp(acc + increment, limit);
+    acc =
+      limit === undefined ? fit(acc + increment, integratorBits, overflow.integrator) : clamp(acc + increment, limit);
   };
 
   return {

@@ -14,7 +14,8 @@ const sgn = (value: bigint): bigint => (value < 0n ? -1n : 1n);
 export const powerLawBits = { 2: 24, 4: 13, 8: 7 } as const;
 
 /** Right shift t of each rail before the power law. */
-export const powerLawShift = ({ sampleBits, power }: CarrierWords): number => Math.max(0, sampleBits - powerLawBits[power!]);
+export const powerLawShift = ({ sampleBits, power }: CarrierWords): number =>
+  Math.max(0, sampleBits - powerLawBits[power!]);
 
 /** log2 of one LSB of the detector value X, in detector units. */
 export function detectorLsbLog2(words: CarrierWords): number {
