@@ -100,7 +100,9 @@ describe('runPoint', () => {
 
   // The number itself has no source outside: it holds the simulator to what evidence was filed with.
   it('keeps the checksum of a short run', () => {
-    expect(runPoint(qpskJob({ check: { trials: 2, symbols: 500 } }), 0).checksum).toMatchInlineSnapshot(`"f6982f414adb5601"`);
+    expect(runPoint(qpskJob({ check: { trials: 2, symbols: 500 } }), 0).checksum).toMatchInlineSnapshot(
+      `"f6982f414adb5601"`,
+    );
   });
 
   it('gives the same nodes in unbounded integers', () => {
