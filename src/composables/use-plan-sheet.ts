@@ -5,6 +5,7 @@ import { createPlan, getPlan, type DraftPlan, type PlanSheet, type RevisionSumma
 import { getRevision, listRevisions, saveRevision, type Revision, type StalePlan } from '../api/revisions';
 import { useAction } from './use-action';
 import type { DraftSession } from './use-draft';
+import { usePlanImport } from './use-plan-import';
 import { useDraftKeeper } from './use-draft-keeper';
 import { firstPlan, forgetNewPlan, keepNewPlan } from './first-plan';
 
@@ -33,6 +34,7 @@ export function usePlanSheet(id: () => number | undefined, draft: DraftSession) 
   /** Grows whenever another description is opened in the form; 0 until the first one. */
   const opened = ref(0);
   const restored = ref(false);
+  const upload = usePlanImport();
   const keeper = useDraftKeeper(id, draft);
   const missing = computed(() => loading.error.value?.status === 404);
 
@@ -54,6 +56,11 @@ export function usePlanSheet(id: () => number | undefined, draft: DraftSession) 
   watch(draft.plan, (typed) => {
     if (id() === undefined && typed !== untouched) keepNewPlan(typed);
   });
+  /** Puts an uploaded description into the form of a new plan. */
+  async function openFile(file: File) {
+    await upload.take(file);
+    if (!upload.error.value) await open();
+  }
   function startOver() {
     forgetNewPlan();
     void open();
@@ -108,7 +115,7 @@ export function usePlanSheet(id: () => number | undefined, draft: DraftSession) 
   watch(id, () => void open(), { immediate: true });
   return {
     ...{ sheet, revisions, head, divergence, missing, opened, restored },
-    ...{ loading, saving, keeper, open, startOver, create, save, rebase },
+    ...{ loading, saving, upload, keeper, open, openFile, startOver, create, save, rebase },
   };
 }
 

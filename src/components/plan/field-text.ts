@@ -43,6 +43,8 @@ function numberOf(pointer: string, value: number): string {
   const sign = symmetric && shown !== 0 ? { symmetric: true } : {};
   // ζ = 1/√2 has sixteen digits; four say it.
   const digits = pointer.endsWith('/damping') ? { significant: 4 } : {};
+  const one = shown === 1 && (unit === 'updates' || unit === 'symbols');
+  if (one) return `1 ${unit.slice(0, -1)}`;
   return quantityText(shown, { unit, ...sign, ...digits, ...(decimals !== undefined && { least: decimals }) });
 }
 

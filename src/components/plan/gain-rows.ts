@@ -32,6 +32,7 @@ const prefixes: [number, string][] = [
   [1e3, 'kHz'],
   [1, 'Hz'],
   [1e-3, 'mHz'],
+  [1e-6, 'µHz'],
 ];
 
 /** Everything that a design says of a loop's stages: asked for, reached, gains, words. */
@@ -161,9 +162,9 @@ function rangeRows({ detector, stages, acquisition, resolutionHz }: LoopDesign):
     hertz('One LSB', resolutionHz),
     hertz('Unambiguous below', unambiguousHz),
     hertz('False locks every', falseLockSpacingHz),
-    hertz('Offset to expect', offsetHz),
+    hertz('Offset to expect', offsetHz || null),
     hertz('Offset held', largestOffsetHz),
-    put('Rate error to expect', 'ppm', { value: offsetPpm, decimals: 1 }),
+    put('Rate error to expect', 'ppm', { value: offsetPpm || null, decimals: 1 }),
     put('Rate error held', 'ppm', { value: largestOffsetPpm, decimals: 1 }),
     hertz('Lock-in, estimate', lockInHz),
     put('Pull-in, estimate', 'symbols', { value: pullInSymbols || null, decimals: 0 }),

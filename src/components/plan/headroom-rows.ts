@@ -71,8 +71,8 @@ function labelOf({ node, stage }: HeadroomNode, { acquisition }: LoopDesign, esN
   if (ahead.includes(node)) return `${names[node]}, 4σ at ${numberText(esN0Db)} dB`;
   const { offsetHz, offsetPpm } = acquisition;
   if (node !== 'integrator') return names[node];
-  if (offsetHz !== null) return `${names[node]} at ±${quantityText(offsetHz, { unit: 'Hz', significant: 4 })}`;
-  return offsetPpm === null ? names[node] : `${names[node]} at ±${numberText(offsetPpm)} ppm`;
+  if (offsetHz) return `${names[node]} at ±${quantityText(offsetHz, { unit: 'Hz', significant: 4 })}`;
+  return !offsetPpm ? names[node] : `${names[node]} at ±${numberText(offsetPpm)} ppm`;
 }
 
 function worstOfEachNode(headroom: readonly HeadroomNode[]): HeadroomNode[] {

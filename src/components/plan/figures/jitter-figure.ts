@@ -42,7 +42,9 @@ function curves({ sweep }: Budget): Series[] {
     { label: 'oscillator', tone: 'soft', thin: true, dash: true, points: over(sweep.oscillator) },
     { label: 'total', tone: 'ink', points: over(sweep.total) },
   ];
-  return parts.filter(({ points }) => points.length > 1);
+  const drawn = parts.filter(({ points }) => points.length > 1);
+  // With one term alone the total is that term.
+  return drawn.length > 2 ? drawn : drawn.slice(-1);
 }
 
 const marks = (budget: Budget, asked: readonly (number | null)[]): Marker[] =>
