@@ -15,7 +15,7 @@ export function useMapFiles({ body, base, editMap }: TargetSheet) {
     try {
       const map = asRegisterMap(parseMapText(text));
       if (typeof map === 'string') refusal.value = `${fileName} is not taken. ${map}`;
-      else editMap(map, `The map is that of ${fileName}, with ${map.registers.length} registers.`);
+      else editMap(map, `The map is that of ${fileName} now.`);
     } catch (error) {
       if (!(error instanceof MapTextError)) throw error;
       refusal.value = `${fileName} is neither YAML nor JSON. ${error.message}`;

@@ -4,6 +4,7 @@ import type { RegisterMap } from '../../shared/model/register-map';
 import type { TargetBody } from '../../shared/model/target';
 import { changedRegisters, rebaseMap } from '../../shared/registers/map-changes';
 import { getTarget, saveTarget, type TargetDetail } from '../api/targets';
+import { detailsOf } from '../components/target/target-details';
 import { useAction } from './use-action';
 import { remembered } from './use-remembered';
 
@@ -19,14 +20,7 @@ interface Undo {
   body: TargetBody;
 }
 
-export const bodyOf = ({ slug, name, loopClockHz, cPrefix, baseAddress, registerMap }: TargetDetail): TargetBody => ({
-  slug,
-  name,
-  loopClockHz,
-  cPrefix,
-  baseAddress,
-  registerMap,
-});
+export const bodyOf = (target: TargetDetail): TargetBody => ({ ...detailsOf(target), registerMap: target.registerMap });
 
 const textOf = (body: TargetBody): string => JSON.stringify(stableOrder(body));
 

@@ -16,3 +16,9 @@ export function integerText(value: number | undefined, hexBits?: number): string
     .toUpperCase()
     .padStart(Math.ceil(hexBits / 4), '0')}`;
 }
+
+/** An input whose text is no integer, by its id; without a sentence once it can be read again. */
+export interface Misread {
+  id: string;
+  sentence: string | undefined;
+}

@@ -2,6 +2,14 @@ import type { TargetBody } from '../../../shared/model/target';
 
 export type Details = Omit<TargetBody, 'registerMap'>;
 
+export const detailsOf = ({ slug, name, loopClockHz, cPrefix, baseAddress }: Details): Details => ({
+  slug,
+  name,
+  loopClockHz,
+  cPrefix,
+  baseAddress,
+});
+
 const plain = (name: string): string => name.normalize('NFKD').replace(/\p{M}/gu, '');
 
 /** Short name that follows a name: `Corvid C3` gives `corvid-c3`. */
