@@ -51,7 +51,7 @@ async function launch(folder, { flags, patterns }, lockFile) {
  * @property {Account} app may SELECT, INSERT, UPDATE, DELETE
  * @property {string} database name of the database both may use
  * @property {number} pid of mariadbd
- * @property {Promise<void>} ended settles when mariadbd has ended, for whatever reason
+ * @property {Promise<string>} ended settles when mariadbd has ended, for whatever reason; says where its log is
  * @property {() => Promise<void>} stop ends mariadbd; throw-away data goes with it
  */
 
@@ -67,7 +67,7 @@ async function start(folder, kind, { lockFile, cleanUp }) {
       app: { user: userNames.app, password: passwords.app },
       database: databaseName,
       pid: mariadb.pid,
-      ended: mariadb.ended,
+      ended: mariadb.ended.then(() => `its log: ${join(folder, 'error.log')}`),
       stop: () => mariadb.stop().finally(cleanUp),
     };
   } catch (error) {

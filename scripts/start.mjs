@@ -29,7 +29,7 @@ function greet(address, database) {
 async function serve(server, database) {
   const parts = { 'The server': server.ended, ...(database && { 'The database': database.ended }) };
   const end = firstToEnd(parts, askedToEnd());
-  const ready = await stepWithOutput('Server', () => Promise.race([server.ready, end.then(() => undefined)]));
+  const ready = await stepWithOutput('Server ready', () => Promise.race([server.ready, end.then(() => undefined)]));
   if (ready) greet(ready.address, database);
   const ended = await end;
   // A server that did not start has said why.
@@ -45,7 +45,7 @@ await runMain(async () => {
     const command = [process.execPath, '--enable-source-maps', 'dist/server/index.js'];
     const server = supervise(command, serverEnvironment(database, port));
     const code = await serve(server, database);
-    await step('Stopping', () => server.stop());
+    await (code === 0 ? step('Stopping', () => server.stop()) : server.stop());
     return code;
   } finally {
     await database?.stop();

@@ -30,10 +30,10 @@ export async function buildWhenChanged() {
   const wanted = fingerprint(root, sources);
   if (builtFrom() === wanted) return nothingToDo('Application', 'already built');
   rmSync(stamp, { force: true }); // a build that is cut short is not taken for a finished one
-  await step('Web application', () =>
+  await step('Web application built', () =>
     mustRun([process.execPath, 'node_modules/@quasar/app-vite/bin/quasar.js', 'build']),
   );
-  await step('Server', () => mustRun([process.execPath, 'scripts/build-server.mjs']));
+  await step('Server built', () => mustRun([process.execPath, 'scripts/build-server.mjs']));
   usingPath(stamp, () => {
     mkdirSync(inRoot('dist'), { recursive: true });
     writeFileSync(stamp, wanted);

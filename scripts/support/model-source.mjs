@@ -14,8 +14,15 @@ function importTypes(node, schemas, imports) {
   if (Array.isArray(node)) return node.map((item) => importTypes(item, schemas, imports));
   if (typeof node !== 'object' || node === null) return node;
   if (typeof node.$ref === 'string' && !node.$ref.startsWith('#')) return importedType(node, schemas, imports);
+  if (Array.isArray(node.prefixItems)) return tuple(node);
   return Object.fromEntries(Object.entries(node).map(([key, value]) => [key, importTypes(value, schemas, imports)]));
 }
+
+// The generator reads prefixItems as an array of nothing; ours hold plain numbers and texts.
+const tuple = ({ description, prefixItems }) => ({
+  description,
+  tsType: `[${prefixItems.map(({ type }) => (type === 'integer' ? 'number' : type)).join(', ')}]`,
+});
 
 function importedType({ $ref, description }, schemas, imports) {
   const [file, pointer] = $ref.split('#');
