@@ -45,7 +45,7 @@ export const transponder17 = (track: number, integratorLimitHz: number): Plan =>
     carrierFrequencyHz: 1.55e9,
     carrierTolerancePpm: 25,
     clockTolerancePpm: 25,
-    phaseNoise: broadcastMask as unknown as never[][], // the generated type cannot say pairs
+    phaseNoise: broadcastMask,
   },
 });
 

@@ -1,5 +1,7 @@
+import { isUtf8 } from 'node:buffer';
+import type { IncomingMessage } from 'node:http';
 import express, { type RequestHandler } from 'express';
-import { invalid, unsupportedMedia } from '../errors';
+import { invalid, malformed, unsupportedMedia } from '../errors';
 import { schemaFaults } from '../schema-faults';
 import { validatorOf, type SchemaName } from '../schemas';
 import { storageFault } from '../storable';
@@ -12,7 +14,12 @@ const requireMedia =
   (req, _res, next) =>
     next(req.is(types) ? undefined : unsupportedMedia(types.join(' or ')));
 
-const jsonBody = express.json({ limit: largestBody });
+/** Decoding would put U+FFFD in the place of what is no UTF-8, and store that. */
+function verify(_req: IncomingMessage, _res: unknown, body: Buffer): void {
+  if (!isUtf8(body)) throw malformed('The body is not UTF-8.');
+}
+
+const jsonBody = express.json({ limit: largestBody, verify });
 
 /**
  * Reads a JSON body, checks it against a schema and fills in the defaults.
@@ -32,7 +39,7 @@ export function validateBody(name: SchemaName, within?: string): RequestHandler[
 
 export const yamlTypes = ['application/yaml', 'text/yaml', 'application/x-yaml', 'text/x-yaml'];
 
-const yamlText = express.text({ type: yamlTypes, limit: largestBody });
+const yamlText = express.text({ type: yamlTypes, limit: largestBody, verify });
 
 /** Takes YAML as the body itself or as `{ yaml }`; either way the handler finds `{ yaml }`. */
 export function yamlBody(): RequestHandler[] {

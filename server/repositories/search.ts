@@ -15,7 +15,7 @@ export function searchRepository(db: Knex) {
       const like = likeText(text);
       const [rows] = (await db.raw(
         `(SELECT 'target' AS kind, slug AS \`key\`, name AS label FROM targets
-           WHERE name LIKE :like OR slug LIKE LOWER(:like) ORDER BY name LIMIT :limit)
+           WHERE name LIKE :like OR CONVERT(slug USING utf8mb4) LIKE LOWER(:like) ORDER BY name LIMIT :limit)
          UNION ALL
          (SELECT 'plan', plans.id, CONCAT(plans.name, ', ', targets.name) FROM plans
            JOIN targets ON targets.id = plans.target_id

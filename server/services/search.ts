@@ -17,9 +17,12 @@ const toItem = ({ kind, key, label }: SearchRow): SearchItem => ({ kind, label, 
 
 export function searchService({ db }: Context) {
   return {
-    /** Things whose names hold the text; nothing for an empty one. */
+    /** Things whose names hold the text; nothing for an empty one. The database passes over control characters. */
     async find(text: string): Promise<SearchItem[]> {
-      const trimmed = text.trim().slice(0, 100);
+      const trimmed = text
+        .replace(/\p{Cc}/gu, '')
+        .trim()
+        .slice(0, 100);
       return trimmed === '' ? [] : (await repositories(db).search.find(trimmed, mostOfEachKind)).map(toItem);
     },
   };

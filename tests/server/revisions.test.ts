@@ -1,5 +1,6 @@
 import { execFileSync } from 'node:child_process';
 import { createHash } from 'node:crypto';
+import type { Response } from 'supertest';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { canonicalJson, digestOf } from '../../server/services/digest';
 import { startTestServer, type TestServer } from '../support/test-server';
@@ -20,8 +21,8 @@ describe('canonicalJson', () => {
   // RFC 8785, section 3.2.3 (sorting by UTF-16 units) and 3.2.2.3 (numbers); expected text from the RFC.
   it('writes the example of RFC 8785', () => {
     const example = {
-      numbers: [333333333.33333329, 1e30, 4.5, 2e-3, 0.000000000000000000000000001],
-      string: '\u20ac$\u000F\u000aA\'\u0042\u0022\u005c\\"\/',
+      numbers: [Number('333333333.33333329'), 1e30, 4.5, 2e-3, 0.000000000000000000000000001],
+      string: '\u20ac$\u000F\u000aA\'\u0042\u0022\u005c\\"/',
       literals: [null, true, false],
     };
     expect(canonicalJson(example)).toBe(
@@ -184,7 +185,7 @@ describe('files of a revision', () => {
   );
 });
 
-function asText(response: NodeJS.ReadableStream, done: (error: Error | null, body: string) => void): void {
+function asText(response: Response, done: (error: Error | null, body: string) => void): void {
   const parts: Buffer[] = [];
   response.on('data', (part: Buffer) => parts.push(part)).on('end', () => done(null, Buffer.concat(parts).toString()));
 }

@@ -28,7 +28,7 @@ export interface TestServer {
   /** Stands still until a test moves it. */
   clock: { now: Date };
   /** Calls the API as the person of a role, or signed out. Paths begin behind /api/v1. */
-  as(role?: Role): Client;
+  as: (role?: Role) => Client;
   stop(): Promise<void>;
 }
 
