@@ -97,7 +97,7 @@ export type Plan = {
      * @minItems 2
      * @maxItems 64
      */
-    phaseNoise?: never[][];
+    phaseNoise?: [number, number][];
   };
 
   /**
