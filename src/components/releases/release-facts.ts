@@ -33,7 +33,7 @@ export function stationNotes(release: Release): Partial<Record<Release['state'],
   const shut = release.gates.filter(({ state }) => state === 'shut').length;
   return {
     draft: `${dateText(release.createdAt)}, ${entries === 1 ? '1 entry' : `${entries} entries`}`,
-    'in-review': 'not in this version',
+    'in-review': release.state === 'draft' ? 'not in this version' : 'skipped',
     frozen: release.frozenAt
       ? `${dateText(release.frozenAt)}, ${release.files.length} files`
       : `${shut === 0 ? 'no gate' : shut === 1 ? '1 gate' : `${shut} gates`} shut`,

@@ -101,3 +101,12 @@ export function missingTrials({ trials, lockProbability, confidence }: CheckForm
   const least = leastTrials({ lockProbability, confidence });
   return trials < least ? least : undefined;
 }
+
+const mostTrials = 10_000;
+
+/** Trials with which an undecided check has a fair chance to decide: three times as many, and more than the fewest. */
+export function trialsToDecide({ trials, limits }: CompleteCheck): number {
+  const least = leastTrials(limits);
+  const wanted = Math.max(3 * trials, Number.isFinite(least) ? 1.2 * least : 0);
+  return Math.min(mostTrials, 100 * Math.ceil(wanted / 100));
+}

@@ -23,13 +23,12 @@ export function pointsAt(check: CompleteCheck, esN0Db: number, results: readonly
     .sort((a, b) => a.offsetHz - b.offsetHz);
 }
 
-/** The points worth reading first: each one that is not proved, its neighbours, both ends and the middle. */
+/** The points worth reading first: where the verdict changes from one offset to the next, both ends and the middle. */
 export function notablePoints(points: readonly CheckPoint[]): CheckPoint[] {
-  const open = (place: number) => points[place]?.result !== undefined && points[place].result.verdict !== 'pass';
-  const middle = Math.floor((points.length - 1) / 2);
+  const verdict = (place: number) => points[place]?.result?.verdict;
+  const parted = (place: number, other: number) => points[other] !== undefined && verdict(place) !== verdict(other);
+  const fixed = [0, Math.floor((points.length - 1) / 2), points.length - 1];
   return points.filter(
-    ({ result }, place) =>
-      result !== undefined &&
-      (open(place - 1) || open(place) || open(place + 1) || [0, middle, points.length - 1].includes(place)),
+    ({ result }, place) => result && (fixed.includes(place) || parted(place, place - 1) || parted(place, place + 1)),
   );
 }

@@ -1,7 +1,7 @@
 import { ticks } from 'd3';
 import { numberText } from '../../../shared/quantities/format';
 import type { Replay } from '../../api/replays';
-import type { Axis, Band, Marker, PlotData, Tone } from '../plot/plot-model';
+import type { Axis, Band, Marker, PlotData, Series, Tone } from '../plot/plot-model';
 import { pointsAt, type CheckPoint } from './check-points';
 import type { OffsetScale } from './offset-scale';
 import { percentText } from './replay-facts';
@@ -113,16 +113,14 @@ export function timeFigure(input: FigureInput, group: readonly number[], switchS
 /** Phase jitter after lock beside the thermal budget, where the plan's own Es/N0 is among those replayed. */
 export function jitterFigure(input: FigureInput, group: readonly number[], budgetDeg: number | undefined): Figure {
   const { replay, scale } = input;
+  const x = offsetAxis(input, 4);
   return {
     title: 'Phase jitter, ° rms',
-    x: offsetAxis(input, 4),
+    x,
     y: { label: 'jitter', unit: '° rms', zero: true },
-    series: [],
+    series: budgetDeg === undefined ? [] : [levelLine('thermal budget', budgetDeg, x)],
     bands: requiredBand(input, true),
-    limits:
-      budgetDeg === undefined
-        ? []
-        : [{ at: budgetDeg, label: `thermal budget ${numberText(budgetDeg, { decimals: 2 })}`, tone: 'soft' }],
+    limits: [],
     markers: levelsOf(replay, group).flatMap((level) =>
       done(level).flatMap(({ offsetHz, result }) =>
         result.phaseJitterDeg === null
@@ -132,6 +130,15 @@ export function jitterFigure(input: FigureInput, group: readonly number[], budge
     ),
   };
 }
+
+/** Unlabelled, because the points it is compared with lie along it: the caption names it. */
+const levelLine = (label: string, value: number, { domain = [0, 0] }: Axis): Series => ({
+  label,
+  tone: 'soft',
+  dash: true,
+  quiet: true,
+  points: domain.map((x) => [x, value] as const),
+});
 
 type DonePoint = CheckPoint & { result: NonNullable<CheckPoint['result']> };
 

@@ -10,8 +10,10 @@ export function traceFigures(
   offsetHz: number,
   scale: OffsetScale,
 ): (Figure & { height: number })[] {
-  const x: Axis = { label: 'symbols', unit: 'symbols', domain: [0, trace.symbols] };
-  const limits = eventsOf(trace);
+  const x: Axis = { label: 'symbols', domain: [0, trace.symbols] };
+  const events = eventsOf(trace);
+  // The lines run through all three strips; their names stand in the first.
+  const unnamed = events.map((event) => ({ ...event, label: '' }));
   const strip = (title: string, values: readonly number[], tone: 'track' | 'ink', ticks?: number[]) => ({
     bands: [],
     markers: [],
@@ -28,12 +30,12 @@ export function traceFigures(
         points: values.map((value, at) => [trace.symbol[at] ?? 0, value] as const),
       },
     ],
-    limits,
+    limits: unnamed,
   });
   const inUnit = (values: readonly number[]) => values.map((hertz) => scale.of(hertz));
-  const applied = offsetHz === 0 ? undefined : [0, scale.of(offsetHz)];
+  const applied = offsetHz === 0 || trace.outcome !== 'locked' ? undefined : [0, scale.of(offsetHz)];
   return [
-    strip(`Integrator, ${scale.unit}`, inUnit(trace.integratorHz), 'track', applied),
+    { ...strip(`Integrator, ${scale.unit}`, inUnit(trace.integratorHz), 'track', applied), limits: events },
     strip('Phase error, °', trace.phaseErrorDeg, 'ink'),
     strip(`NCO word, ${scale.unit}`, inUnit(trace.frequencyHz), 'ink', applied),
   ];

@@ -55,6 +55,19 @@ function placesText(runs: readonly Run[], scale: OffsetScale): string {
 const placeText = ({ from, to }: Pick<Run, 'from' | 'to'>, scale: OffsetScale): string =>
   from === to ? `at ${scale.text(from)}` : `from ${scale.text(from)} to ${scale.text(to)}`;
 
+/** How it stands inside the range that the plan asks for, where a check goes beyond it; undefined elsewhere. */
+export function requiredText({ check, points }: Replay, requiredHz: number, scale: OffsetScale): string | undefined {
+  const { start, stop } = check.carrierOffsetHz;
+  if (requiredHz === 0 || Math.max(Math.abs(start), Math.abs(stop)) <= requiredHz) return undefined;
+  const inside = points.filter(({ offsetHz }) => Math.abs(offsetHz) <= requiredHz);
+  const counts = (['pass', 'undecided', 'fail'] as const)
+    .map((verdict) => ({ verdict, count: inside.filter((point) => point.verdict === verdict).length }))
+    .filter(({ count }) => count > 0)
+    .map(({ verdict, count }) => `${count === inside.length ? 'all ' : ''}${numberText(count)} ${said[verdict]}`);
+  if (counts.length === 0) return undefined;
+  return `Inside the required ±${numberText(scale.of(requiredHz))} ${scale.unit}: ${counts.join(', ')}.`;
+}
+
 /** Says that trials held a wrong frequency with a quiet error, which a lock detector alone would take for lock. */
 export function falseLockText(points: readonly ReplayPoint[]): string | undefined {
   const hit = points.filter(({ falseLocks }) => falseLocks > 0);

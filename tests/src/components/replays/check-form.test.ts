@@ -7,6 +7,7 @@ import {
   readEsN0,
   suggestedForm,
   symbolCount,
+  trialsToDecide,
 } from '../../../../src/components/replays/check-form';
 import { check } from '../../support/replay';
 
@@ -70,5 +71,17 @@ describe('missingTrials', () => {
   it('names the fewest trials that could pass, when the form has fewer', () => {
     expect(missingTrials({ ...formOf(check), trials: 367 })).toBe(368);
     expect(missingTrials({ ...formOf(check), trials: 368 })).toBeUndefined();
+  });
+});
+
+describe('trialsToDecide', () => {
+  // 1.2 × 368 = 441.6, rounded up to a hundred.
+  it('is never so few that no point could pass', () => {
+    expect(trialsToDecide({ ...check, trials: 40 })).toBe(500);
+  });
+
+  it('triples what was run, up to what a check may have', () => {
+    expect(trialsToDecide({ ...check, trials: 400 })).toBe(1200);
+    expect(trialsToDecide({ ...check, trials: 5000 })).toBe(10_000);
   });
 });

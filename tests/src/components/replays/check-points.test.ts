@@ -33,9 +33,15 @@ describe('pointsAt', () => {
 });
 
 describe('notablePoints', () => {
-  it('keeps what is not proved with its neighbours, the ends and the middle', () => {
+  it('keeps both sides of every change of verdict, the ends and the middle', () => {
     const eleven = { ...check, esN0Db: [6.5], carrierOffsetHz: { start: -5, stop: 5, points: 11 } };
     const results = Array.from({ length: 11 }, (_, index) => result(index, index === 7 ? 'undecided' : 'pass'));
     expect(notablePoints(pointsAt(eleven, 6.5, results)).map(({ offsetHz }) => offsetHz)).toEqual([-5, 0, 1, 2, 3, 5]);
+  });
+
+  it('does not list a whole range of one verdict', () => {
+    const eleven = { ...check, esN0Db: [6.5], carrierOffsetHz: { start: -5, stop: 5, points: 11 } };
+    const results = Array.from({ length: 11 }, (_, index) => result(index, index < 4 ? 'fail' : 'pass'));
+    expect(notablePoints(pointsAt(eleven, 6.5, results)).map(({ offsetHz }) => offsetHz)).toEqual([-5, -2, -1, 0, 5]);
   });
 });

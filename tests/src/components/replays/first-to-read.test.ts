@@ -10,7 +10,11 @@ describe('firstToRead', () => {
     );
   });
 
-  it('takes the farthest of equals, and none of none', () => {
+  it('takes the nearest of several that fail: there it begins', () => {
+    expect(firstToRead(replay({ points: [result(0, 'fail'), result(1, 'fail'), result(2, 'pass')] }))?.index).toBe(1);
+  });
+
+  it('takes the farthest where all are proved, and none of none', () => {
     expect(firstToRead(replay({ points: [result(2, 'pass'), result(4, 'pass')] }))?.index).toBe(4);
     expect(firstToRead(replay())).toBeUndefined();
   });

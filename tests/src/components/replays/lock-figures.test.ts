@@ -69,7 +69,14 @@ describe('jitterFigure', () => {
     const points = [result(0, 'fail', { phaseJitterDeg: null }), result(1, 'pass')];
     const figure = jitterFigure({ ...input, replay: replay({ points }) }, group, undefined);
     expect(figure.markers).toHaveLength(1);
-    expect(figure.limits).toEqual([]);
+    expect(figure.series).toEqual([]);
+  });
+
+  it('draws the budget from end to end', () => {
+    expect(jitterFigure(input, group, 1.07).series[0]!.points).toEqual([
+      [-77.5, 1.07],
+      [77.5, 1.07],
+    ]);
   });
 });
 

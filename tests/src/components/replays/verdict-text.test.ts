@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { offsetScale } from '../../../../src/components/replays/offset-scale';
-import { falseLockText, verdictText } from '../../../../src/components/replays/verdict-text';
+import { falseLockText, requiredText, verdictText } from '../../../../src/components/replays/verdict-text';
 import { check, replay, result } from '../../support/replay';
 
 const scale = offsetScale([-77_500, -38_750, 0, 38_750, 77_500]);
@@ -32,6 +32,21 @@ describe('verdictText', () => {
     expect(text).toBe(
       '6.5 dB: proved at −77.50 kHz, 4 of 5 offsets not run. 10 dB: refuted at −77.50 kHz, 4 of 5 offsets not run.',
     );
+  });
+});
+
+describe('requiredText', () => {
+  const points = [result(0, 'fail'), result(1, 'pass'), result(2, 'undecided'), result(3, 'pass'), result(4, 'fail')];
+
+  it('counts the points inside the range of the plan', () => {
+    const text = requiredText(replay({ points }), 40_000, scale);
+    expect(text).toBe('Inside the required ±40 kHz: 2 proved, 1 undecided.');
+    expect(requiredText(replay({ points: [result(2, 'pass')] }), 40_000, scale)).toContain('all 1 proved');
+  });
+
+  it('is silent where the check does not go beyond that range, or the plan asks for none', () => {
+    expect(requiredText(replay({ points }), 77_500, scale)).toBeUndefined();
+    expect(requiredText(replay({ points }), 0, scale)).toBeUndefined();
   });
 });
 
