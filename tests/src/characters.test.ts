@@ -8,7 +8,7 @@ import { describe, expect, it } from 'vitest';
  * face that does not stand on the same grid.
  */
 const held =
-  /^[\u0009\u000a\u000d\u0020-\u007e\u00a0-\u00ff\u0131\u0152\u0153\u02c6\u02da\u02dc\u0370-\u03ff\u2002-\u2064\u20ac\u2122\u2212]*$/u;
+  /^[\t\n\r\u0020-\u007e\u00a0-\u00ff\u0131\u0152\u0153\u02c6\u02da\u02dc\u0370-\u03ff\u2002-\u2064\u20ac\u2122\u2212]*$/u;
 
 function sources(folder: string): string[] {
   return readdirSync(folder, { withFileTypes: true }).flatMap((entry) => {
