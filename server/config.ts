@@ -64,7 +64,9 @@ export function readConfig(env: Environment): Config {
     host,
     port,
     databaseUrl: databaseAddress('DATABASE_URL', env.DATABASE_URL),
-    databaseOwnerUrl: env.DATABASE_OWNER_URL && databaseAddress('DATABASE_OWNER_URL', env.DATABASE_OWNER_URL),
+    databaseOwnerUrl: env.DATABASE_OWNER_URL
+      ? databaseAddress('DATABASE_OWNER_URL', env.DATABASE_OWNER_URL)
+      : undefined,
     embedded: env.KEEPSTEP_EMBEDDED === '1',
     production: env.NODE_ENV === 'production',
     dataDir: env.KEEPSTEP_DATA_DIR || 'var',

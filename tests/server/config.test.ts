@@ -19,7 +19,8 @@ describe('readConfig', () => {
   });
 
   it('takes an empty variable for an absent one', () => {
-    expect(readConfig({ ...database, PORT: '', KEEPSTEP_SECRET: '' })).toMatchObject({ port: 8080, secret: undefined });
+    const config = readConfig({ ...database, PORT: '', KEEPSTEP_SECRET: '', DATABASE_OWNER_URL: '' });
+    expect(config).toMatchObject({ port: 8080, secret: undefined, databaseOwnerUrl: undefined });
   });
 
   it.each([

@@ -89,7 +89,7 @@ describe('the server', () => {
   ])('ends with one sentence for %o', async (changes, sentence) => {
     const { exit, said } = start(changes);
     expect(await exit).toBe(1);
-    expect(said().trim().split('\n').at(-1)).toBe(sentence);
+    expect(said().trim().split('\n').at(-1), said()).toBe(sentence);
     expect(said()).not.toMatch(/\n\s+at /);
   });
 
@@ -120,5 +120,5 @@ describe('the server', () => {
     second.child.kill('SIGTERM');
     expect(await second.exit).toBe(0);
     expect(second.said()).toBe('');
-  });
+  }, 120_000);
 });
