@@ -1,6 +1,9 @@
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { gaussianOf, upperTail } from '../../../shared/replay/gaussian';
 import { TrialRandom } from '../../../shared/replay/random';
+
+// Millions of draws take their time on a busy machine.
+vi.setConfig({ testTimeout: 60_000 });
 
 /** The word whose upper tail is nearest to a probability. */
 const wordOf = (tail: number): number => (Math.round(tail * 2 ** 32 - 0.5) << 1) >>> 0;

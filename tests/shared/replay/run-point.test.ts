@@ -1,10 +1,13 @@
 import Ajv2020 from 'ajv/dist/2020';
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import schema from '../../../schemas/replay-point.schema.json';
 import { digestContent } from '../../../shared/replay/digest';
 import { pointCount } from '../../../shared/replay/job';
 import { runPoint } from '../../../shared/replay/run-point';
 import { gains, qpskJob, symbolRateBd } from './link';
+
+// Millions of draws take their time on a busy machine.
+vi.setConfig({ testTimeout: 60_000 });
 
 const validate = new Ajv2020().compile(schema);
 
