@@ -128,7 +128,11 @@ const without = (entries: Record<string, string>, above: string): Record<string,
 
 /** A fault below a pointer (one offset of a mask, a missing key) belongs to it too. */
 const faultAt = (faults: readonly Fault[], pointer: string): string | undefined =>
-  faults.find((fault) => lies(fault.pointer, pointer))?.detail;
+  sentence(faults.find((fault) => lies(fault.pointer, pointer))?.detail);
+
+/** The server's words as a sentence of the form. */
+const sentence = (detail: string | undefined): string | undefined =>
+  detail && `${detail.charAt(0).toUpperCase()}${detail.slice(1)}${/[.?]$/.test(detail) ? '' : '.'}`;
 
 /** True when a plan holds what the server needs before it can work anything out. */
 export const worksOut = (plan: DraftPlan): boolean =>

@@ -51,6 +51,14 @@ const names = ['acquire', 'narrow', 'settle', 'hold', 'stage_5', 'stage_6', 'sta
 const freeName = (stages: readonly DraftStage[]): string =>
   names.find((name) => !stages.some((stage) => stage.name === name)) ?? 'stage';
 
+/** Another order for a loop: only the second takes a damping factor. */
+export function withOrder(plan: DraftPlan, loop: LoopName, order: number): DraftPlan {
+  const stages = stagesOf(plan, loop).map(({ damping, ...stage }) =>
+    order === 2 ? { ...stage, damping: damping ?? Math.SQRT1_2 } : stage,
+  );
+  return withValue(withValue(plan, `/${loop}/order`, order), `/${loop}/stages`, stages);
+}
+
 /**
  * The same stage told by its natural frequency instead of its bandwidth, or the other way round (order 2):
  * ωn = 2 Bn/(ζ + 1/(4ζ)).

@@ -26,16 +26,22 @@ export function sCurveFigure({ detector }: LoopDesign, kind: LoopKind, esN0Db: n
   };
 }
 
-function curves({ curve, variance }: Detector, scale: number, esN0Db: number): Series[] {
+function curves({ curve, variance, gain, gainWithoutNoise }: Detector, scale: number, esN0Db: number): Series[] {
   const x = curve.x.map((at) => at * scale);
   const noisy = pointsOf(x, curve.noisy);
   const sigma = Math.sqrt(variance ?? 0);
-  const area =
-    variance === null ? [] : noisy.map(([at, mean]): [number, number, number] => [at, mean - sigma, mean + sigma]);
-  return [
-    { label: 'no noise', tone: 'soft', dash: true, thin: true, points: pointsOf(x, curve.noiseless) },
-    { label: `${numberText(esN0Db)} dB`, tone: 'track', points: noisy, ...(area.length > 0 && { area }) },
-  ];
+  const area = noisy.map(([at, mean]): [number, number, number] => [at, mean - sigma, mean + sigma]);
+  // Where noise leaves the mean alone, as in a product of two samples, one curve says all.
+  const alike = gain === gainWithoutNoise;
+  const noiseless: Series = {
+    label: 'no noise',
+    tone: 'soft',
+    dash: true,
+    thin: true,
+    points: pointsOf(x, curve.noiseless),
+  };
+  const label = alike ? 'mean error' : `${numberText(esN0Db)} dB`;
+  return [...(alike ? [] : [noiseless]), { label, tone: 'track', points: noisy, ...(variance !== null && { area }) }];
 }
 
 /** The tangent at lock, over the middle of the period. */
