@@ -13,6 +13,7 @@ export default defineConfig(() => {
       distDir: 'dist/spa',
     },
     devServer: {
+      host: '127.0.0.1', // the demo accounts' password is known: nobody else may reach them
       port: Number(process.env.WEB_PORT ?? 9000),
       open: false,
       proxy: { '/api': { target: `http://127.0.0.1:${apiPort}`, changeOrigin: false } },

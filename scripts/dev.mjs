@@ -25,6 +25,7 @@ await runMain(async () => {
   const apiPort = await portFromEnvironment('API_PORT', 8081);
   const webPort = await portFromEnvironment('WEB_PORT', 9000);
   const database = await embeddedDatabase();
+  console.log(`\nKeepstep  http://127.0.0.1:${webPort} reloads as files change; Ctrl-C stops.\n`);
   const parts = startBoth(database, { apiPort, webPort });
   const ends = Object.fromEntries(Object.entries(parts).map(([name, part]) => [name, part.ended]));
   try {
