@@ -34,14 +34,16 @@ export function placeLabels(data: PlotData, scales: PlotScales): Label[] {
         .filter(({ label: text }) => text !== label.text)
         .map((limit) => apartFrom(limit, boxOf(label), scales)),
     );
-  const put = (candidates: readonly Label[], own?: number) => {
+  const put = (candidates: readonly Label[], own?: number, wanted = enough) => {
     const inside = candidates.filter((label) => isInside(boxOf(label), scales));
-    const best = inside.map((label) => ({ label, free: cost(label, own) })).sort((a, b) => b.free - a.free)[0];
+    const best = inside
+      .map((label) => ({ label, free: Math.min(wanted, cost(label, own)) }))
+      .sort((a, b) => b.free - a.free)[0];
     if (best) placed.push(best.label);
   };
-  data.limits.forEach((limit) => put(limitPlaces(limit, scales)));
-  data.bands.forEach((band) => put(bandPlaces(band, scales)));
-  data.markers.forEach((marker) => put(markerPlaces(marker, scales)));
+  data.limits.forEach((limit) => put(limitPlaces(limit, scales), undefined, 4));
+  data.bands.forEach((band) => put(bandPlaces(band, scales), undefined, 4));
+  data.markers.forEach((marker) => put(markerPlaces(marker, scales), undefined, 4));
   data.series.forEach((series, at) => {
     if (!series.quiet) put(curvePlaces(series, traces[at]!, scales), at);
   });
@@ -134,7 +136,9 @@ function limitPlaces(limit: Limit, { x, y, left, right, top, bottom }: PlotScale
     return [bottom - 8, top + 10].flatMap((py) => [of(px + 5, py, 'start'), of(px - 5, py, 'end')]);
   }
   const py = y(limit.at);
-  return [py - 4, py + 12].flatMap((at) => [of(right - 2, at, 'end'), of(left + 4, at, 'start')]);
+  const ends = [of(right - 2, py - 4, 'end'), of(right - 2, py + 12, 'end'), of(left + 4, py - 4, 'start')];
+  const between = Array.from({ length: Math.floor((right - left) / 16) }, (_, step) => right - 2 - 16 * step);
+  return [...ends, ...between.flatMap((at) => [of(at, py - 4, 'end'), of(at, py + 12, 'end')])];
 }
 
 function bandPlaces(band: Band, { x, top, bottom }: PlotScales): Label[] {

@@ -18,20 +18,23 @@ export function plotTables(data: PlotData): PlotTable[] {
   return [curveTable(data), markTable(data)].filter((table) => table.rows.length > 0);
 }
 
-function curveTable(data: PlotData): PlotTable {
-  const { series, x } = data;
+function curveTable({ series, x }: PlotData): PlotTable {
   const xs = [...new Set(series.flatMap(({ points }) => points.map(([at]) => at)))].sort((a, b) => a - b);
-  const head = series.flatMap((each) =>
-    each.area ? [each.label, `${each.label}, low`, `${each.label}, high`] : [each.label],
-  );
-  return { head: [axisName(x), ...head], rows: xs.map((at) => [at, ...series.flatMap((each) => valuesAt(each, at))]) };
+  const columns = series.flatMap(columnsOf);
+  return {
+    head: [axisName(x), ...columns.map(({ head }) => head)],
+    rows: xs.map((at) => [at, ...columns.map(({ values }) => values.get(at))]),
+  };
 }
 
-function valuesAt(series: Series, x: number): (number | undefined)[] {
-  const exact = series.points.find(([at]) => at === x)?.[1];
-  if (!series.area) return [exact];
-  const [, low, high] = series.area.find(([at]) => at === x) ?? [];
-  return [exact, low, high];
+function columnsOf({ label, points, area }: Series): { head: string; values: Map<number, number> }[] {
+  const curve = { head: label, values: new Map(points) };
+  if (!area) return [curve];
+  return [
+    curve,
+    { head: `${label}, low`, values: new Map(area.map(([at, low]) => [at, low])) },
+    { head: `${label}, high`, values: new Map(area.map(([at, , high]) => [at, high])) },
+  ];
 }
 
 function markTable({ markers, x, y }: PlotData): PlotTable {

@@ -96,7 +96,7 @@ function thinned(axis: Axis, scale: Scale, ticks: readonly number[]): readonly n
 /** Decades, with 3 between them (or 2 and 5) where there is room. */
 function logTicks(low: number, high: number, count: number): number[] {
   const decades = Math.log10(high / low);
-  const steps = decades * 3 <= count ? [1, 2, 5] : decades * 2 <= count + 1 ? [1, 3] : [1];
+  const steps = decades <= 1.2 ? [1, 2, 5] : decades * 2 <= count + 1 ? [1, 3] : [1];
   const every = steps.length === 1 ? Math.max(1, Math.round(decades / count)) : 1;
   const ticks: number[] = [];
   for (let power = Math.floor(Math.log10(low)); power <= Math.ceil(Math.log10(high)); power += every) {
