@@ -2,6 +2,7 @@ import { AppError, conflict, invalid } from './errors';
 
 interface DatabaseError {
   code: string;
+  errno: number;
   sqlState: string;
   sqlMessage: string;
 }
@@ -25,15 +26,18 @@ const unfit = new Set([
   'ER_WARN_DATA_OUT_OF_RANGE',
   'ER_TRUNCATED_WRONG_VALUE_FOR_FIELD',
   'ER_TRUNCATED_WRONG_VALUE',
-  'ER_CONSTRAINT_FAILED',
 ]);
+
+/** A failed CHECK, ER_CONSTRAINT_FAILED of MariaDB; the driver calls the number by what it is in MySQL. */
+const constraintFailed = 4025;
 
 /** A refusal by the database that the caller can act on; undefined for everything else, which is a defect. */
 export function asDatabaseRefusal(error: unknown): AppError | undefined {
   if (!isDatabaseError(error)) return undefined;
   // Triggers guard what may never change; their sentence is written for people.
   if (error.sqlState === '45000') return conflict(error.sqlMessage, error);
-  if (unfit.has(error.code)) return invalid([{ pointer: '', detail: 'does not fit what can be stored' }], error);
+  if (unfit.has(error.code) || error.errno === constraintFailed)
+    return invalid([{ pointer: '', detail: 'does not fit what can be stored' }], error);
   const title = titles[error.code];
   return title ? conflict(title, error) : undefined;
 }

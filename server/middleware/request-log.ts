@@ -23,5 +23,5 @@ export const requestLog = (logger: Logger) =>
       }),
       res: ({ statusCode }: { statusCode: number }) => ({ statusCode }),
     },
-    customLogLevel: (_req, res, error) => (error || res.statusCode >= 500 ? 'error' : 'debug'),
+    customLogLevel: (_req, res, error) => (error || res.statusCode >= 500 ? 'error' : 'info'),
   });

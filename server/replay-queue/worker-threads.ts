@@ -33,6 +33,7 @@ export function workerThreadQueue(
   { threads = Math.max(1, availableParallelism() - 1) } = {},
 ): ReplayQueue {
   const pool = new Piscina({ ...workerOptions(), minThreads: 0, maxThreads: threads, idleTimeout: 60_000 });
+  pool.on('error', (error: unknown) => logger.error(error, 'a worker thread ended'));
   let stopped = false;
   let running: Running | undefined;
   let work: Promise<void> | undefined;

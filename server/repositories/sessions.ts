@@ -27,14 +27,12 @@ export interface Session {
   userAgent: string;
 }
 
-/** A refresh token with the state of its session. */
+/** A refresh token with the person of its session. */
 export interface RefreshToken {
   id: number;
   sessionId: number;
   personId: number;
   usedAt: Date | null;
-  /** The session was neither ended nor left unused for too long. */
-  alive: boolean;
 }
 
 export interface NewSession {
@@ -78,16 +76,14 @@ export function sessionsRepository(db: Knex) {
       await tokens().insert({ session_id: sessionId, token_hash: hash, created_at: at });
     },
     /** Locks the session: two tabs that renew at once take their turn. */
-    async findToken(hash: string, at: Date): Promise<RefreshToken | undefined> {
+    async findToken(hash: string): Promise<RefreshToken | undefined> {
       const token = await tokens().where({ token_hash: hash }).first();
       if (!token) return undefined;
       const session = await sessions().where({ id: token.session_id }).forUpdate().first();
       // Read again under the lock: the other tab may have used it while this one waited.
       const current = await tokens().where({ id: token.id }).forUpdate().first();
       if (!session || !current) return undefined;
-      const { id, session_id: sessionId, used_at: usedAt } = current;
-      const isAlive = session.revoked_at === null && session.expires_at > at;
-      return { id, sessionId, personId: session.person_id, usedAt, alive: isAlive };
+      return { id: current.id, sessionId: session.id, personId: session.person_id, usedAt: current.used_at };
     },
     async useToken(id: number, at: Date): Promise<void> {
       await tokens().where({ id }).whereNull('used_at').update({ used_at: at });

@@ -41,7 +41,7 @@ export function plansRoutes(plans: PlansService): Route[] {
       summary: 'Check a plan description in YAML and fill in its defaults; nothing is stored',
       before: yamlBody(),
       handle(req, res) {
-        res.json({ plan: planFromYaml((req.body as PlanYaml).yaml) });
+        res.json(planFromYaml((req.body as PlanYaml).yaml));
       },
     },
     {

@@ -48,7 +48,7 @@ export function sessionsService({ db, clock, secret, logger }: Context) {
   async function rotate(token: RefreshToken, all: Repositories): Promise<Tokens | undefined> {
     const now = clock();
     const person = await all.sessions.findPerson(token.sessionId, token.personId, now);
-    if (!token.alive || !person) return undefined;
+    if (!person) return undefined;
     if (reused(token, now)) {
       await all.sessions.revoke(token.sessionId, now);
       logger.warn({ session: token.sessionId }, 'a refresh token was used twice: its session was ended');
@@ -84,7 +84,7 @@ export function sessionsService({ db, clock, secret, logger }: Context) {
       if (!refreshToken) throw over();
       const tokens = await inTransaction(db, async (trx) => {
         const all = repositories(trx);
-        const token = await all.sessions.findToken(tokenHash(refreshToken), clock());
+        const token = await all.sessions.findToken(tokenHash(refreshToken));
         return token && rotate(token, all);
       });
       if (!tokens) throw over();
@@ -95,7 +95,7 @@ export function sessionsService({ db, clock, secret, logger }: Context) {
       await inTransaction(db, async (trx) => {
         const { sessions } = repositories(trx);
         const now = clock();
-        const token = refreshToken ? await sessions.findToken(tokenHash(refreshToken), now) : undefined;
+        const token = refreshToken ? await sessions.findToken(tokenHash(refreshToken)) : undefined;
         if (token) await sessions.revoke(token.sessionId, now);
         if (sessionId) await sessions.revoke(sessionId, now);
       });

@@ -5,6 +5,7 @@ import { schemaFaults } from '../schema-faults';
 import { validatorOf } from '../schemas';
 import { storageFault } from '../storable';
 import { completed } from './designs';
+import { readQuantities, type Understood } from './yaml-quantities';
 
 const validate = validatorOf('plan');
 
@@ -30,16 +31,23 @@ function requireTree(value: unknown): void {
   visit(value);
 }
 
+export interface ReadPlan {
+  plan: Plan;
+  /** Quantities that were written with their units. */
+  understood: Understood[];
+}
+
 /**
  * Reads a plan description from YAML 1.2, checks it and fills in its defaults.
  *
  * @throws {AppError} invalid, with a pointer for each fault; of the text itself with an empty pointer and the line
  */
-export function planFromYaml(yaml: string): Plan {
+export function planFromYaml(yaml: string): ReadPlan {
   const value = parse(yaml);
   requireTree(value);
   const fault = storageFault(value);
   if (fault) throw invalid([fault]);
+  const understood = readQuantities((value ?? {}) as Record<string, unknown>);
   if (!validate(value)) throw invalid(schemaFaults(validate.errors ?? []));
-  return completed(value as Plan);
+  return { plan: completed(value as Plan), understood };
 }

@@ -155,7 +155,35 @@ describe('a plan from YAML', () => {
     expect(await server.db('plans')).toHaveLength(before);
   });
 
+  it('takes quantities with their units, and says what it understood', async () => {
+    const text = [
+      'name: Bench link',
+      'target: bench',
+      'signal: { symbolRateBd: 38.4 kBd, esN0Db: 12 }',
+      'carrier: { stages: [{ name: acquire, noiseBandwidth: 0.01 }] }',
+      'environment: { carrierFrequencyHz: 1.55 GHz, carrierTolerancePpm: ±20 ppm }',
+    ].join('\n');
+    const { body } = await send(text).expect(200);
+    expect(body.plan).toMatchObject({
+      signal: { symbolRateBd: 38_400 },
+      environment: { carrierFrequencyHz: 1.55e9, carrierTolerancePpm: 20 },
+    });
+    const understood = body.understood as { pointer: string; written: string }[];
+    expect(understood.map(({ pointer, written }) => [pointer, written])).toEqual([
+      ['/signal/symbolRateBd', '38.4 kBd'],
+      ['/environment/carrierFrequencyHz', '1.55 GHz'],
+      ['/environment/carrierTolerancePpm', '±20 ppm'],
+    ]);
+  });
+
   it.each([
+    ['a quantity of another kind', yaml.replace('1.0e+6', '20 ppm'), '/signal/symbolRateBd', /ppm/],
+    [
+      'a unit that nobody knows',
+      yaml.replace('symbols: 2000', 'symbols: 20 apples'),
+      '/carrier/stages/0/until/symbols',
+      /apples/,
+    ],
     ['an unknown key', `${yaml}\ncolour: red`, '/colour', /not a key/],
     ['a fault of syntax', `${yaml}\n  : : [`, '', /line 8/],
     ['an empty text', '', '', /empty/],
