@@ -22,7 +22,7 @@ export interface AuditEntry {
   person: PersonName | null;
   action: string;
   subject: string;
-  detail: unknown;
+  detail: Readonly<Record<string, unknown>> | null;
 }
 
 export type PersonChange = Partial<Pick<Person, 'role' | 'active' | 'name'>>;

@@ -7,9 +7,9 @@ export interface OffsetScale {
   /** Digits behind the point that every offset of the check gets. */
   decimals: number;
   /** Value in that unit. */
-  of(hertz: number): number;
+  of: (hertz: number) => number;
   /** Text without its unit, with a sign when it is not 0. */
-  text(hertz: number): string;
+  text: (hertz: number) => string;
 }
 
 const finest = 3;
