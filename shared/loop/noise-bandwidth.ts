@@ -1,4 +1,4 @@
-import { add, divide, exactProduct, multiply, negate, toDoubleDouble } from '../math/double-double';
+import { add, divide, multiply, negate, splitter, toDoubleDouble } from '../math/double-double';
 import type { DoubleDouble } from '../math/double-double';
 import type { LinearLoop } from './linear-loop';
 
@@ -49,26 +49,37 @@ function impulseEnergy(denominator: Polynomial, numerator: DoubleDouble[]): numb
 }
 
 /** a_i ← a_i − α·a_(k−i) and b_i ← b_i − β·a_(k−i) with the a of before, i below k. */
-function reduce(a: Polynomial, b: Polynomial, step: { alpha: DoubleDouble; beta: DoubleDouble; degree: number }): void {
-  const { alpha, beta, degree } = step;
+function reduce(
+  a: Polynomial,
+  b: Polynomial,
+  { alpha, beta, degree }: { alpha: DoubleDouble; beta: DoubleDouble; degree: number },
+): void {
   const reversed = { high: a.high.slice(0, degree + 1).reverse(), low: a.low.slice(0, degree + 1).reverse() };
-  for (let i = 0; i < degree; i += 1) {
-    subtractProduct(a, i, alpha, reversed);
-    subtractProduct(b, i, beta, reversed);
-  }
+  subtractProducts(a, alpha, reversed, degree);
+  subtractProducts(b, beta, reversed, degree);
 }
 
-function subtractProduct(target: Polynomial, i: number, factor: DoubleDouble, source: Polynomial): void {
-  const high = source.high[i] as number;
-  const product = exactProduct(factor.high, high);
-  const low = product.low + (factor.high * (source.low[i] as number) + factor.low * high);
-  const before = target.high[i] as number;
-  const sum = before - product.high;
-  const part = sum - before;
-  const rest = before - (sum - part) + (-product.high - part) + ((target.low[i] as number) - low);
-  const result = sum + rest;
-  target.high[i] = result;
-  target.low[i] = rest - (result - sum);
+/** target_i ← target_i − factor·source_i, the exact product and sum of `double-double` written out for speed. */
+function subtractProducts(target: Polynomial, factor: DoubleDouble, source: Polynomial, count: number): void {
+  const shifted = splitter * factor.high;
+  const factorHigh = shifted - (shifted - factor.high);
+  const factorLow = factor.high - factorHigh;
+  for (let i = 0; i < count; i += 1) {
+    const value = source.high[i] as number;
+    const valueShifted = splitter * value;
+    const valueHigh = valueShifted - (valueShifted - value);
+    const valueLow = value - valueHigh;
+    const product = factor.high * value;
+    const error =
+      factorHigh * valueHigh - product + factorHigh * valueLow + factorLow * valueHigh + factorLow * valueLow;
+    const low = error + (factor.high * (source.low[i] as number) + factor.low * value);
+    const before = target.high[i] as number;
+    const sum = before - product;
+    const part = sum - before;
+    const rest = before - (sum - part) + (-product - part) + ((target.low[i] as number) - low);
+    target.high[i] = sum + rest;
+    target.low[i] = rest - ((target.high[i] as number) - sum);
+  }
 }
 
 const at = ({ high, low }: Polynomial, i: number): DoubleDouble => ({ high: high[i] as number, low: low[i] as number });

@@ -12,39 +12,56 @@ import type { LinearLoop } from './linear-loop';
  */
 export function closedLoopPoles(loop: LinearLoop): [number, number][] {
   if (loop.order === 0) return [];
-  const roots = startingPoints(loop);
-  for (let round = 0; round < 80; round += 1) if (improve(loop, roots)) break;
-  return ordered(roots.map(([re, im]): Complex => [1 + re, im]));
+  const start = startingPoints(loop);
+  const roots = { re: Float64Array.from(start, ([re]) => re), im: Float64Array.from(start, ([, im]) => im) };
+  const forward = forwardPolynomial(loop);
+  for (let round = 0; round < 80; round += 1) if (improve(loop, forward, roots)) break;
+  return ordered(start.map((_, i): Complex => [1 + (roots.re[i] as number), roots.im[i] as number]));
+}
+
+/** Real and imaginary parts of the roots, in two arrays: the inner sum runs over all pairs. */
+interface Roots {
+  re: Float64Array;
+  im: Float64Array;
 }
 
 /** One round of the iteration, in place; true once nothing moves any more. */
-function improve(loop: LinearLoop, roots: Complex[]): boolean {
+function improve(loop: LinearLoop, forward: readonly number[], roots: Roots): boolean {
   let settled = true;
-  roots.forEach((root, i) => {
-    const ratio = newtonRatio(loop, root);
-    if (!ratio) return;
-    const crowding = roots.reduce(
-      (sum, other, j) => (j === i ? sum : add(sum, reciprocal(subtract(root, other)))),
-      zero,
-    );
-    const step = divide(ratio, subtract([1, 0], multiply(ratio, crowding)));
-    if (!Number.isFinite(step[0]) || !Number.isFinite(step[1])) return;
-    roots[i] = subtract(root, step);
+  for (let i = 0; i < roots.re.length; i += 1) {
+    const root: Complex = [roots.re[i] as number, roots.im[i] as number];
+    const ratio = newtonRatio(loop, forward, root);
+    if (!ratio) continue;
+    const step = divide(ratio, subtract([1, 0], multiply(ratio, crowding(roots, i))));
+    if (!Number.isFinite(step[0]) || !Number.isFinite(step[1])) continue;
+    roots.re[i] = root[0] - step[0];
+    roots.im[i] = root[1] - step[1];
     if (squaredModulus(step) > 1e-30 * squaredModulus(root)) settled = false;
-  });
+  }
   return settled;
 }
 
-const zero: Complex = [0, 0];
-const reciprocal = (a: Complex): Complex => (squaredModulus(a) > 0 ? divide([1, 0], a) : zero);
+/** Σ 1/(root − other) over the other roots; a root that falls on this one pushes nowhere. */
+function crowding({ re, im }: Roots, i: number): Complex {
+  let [sumRe, sumIm] = [0, 0];
+  for (let j = 0; j < re.length; j += 1) {
+    const dRe = (re[i] as number) - (re[j] as number);
+    const dIm = (im[i] as number) - (im[j] as number);
+    const scale = dRe * dRe + dIm * dIm;
+    if (scale === 0) continue;
+    sumRe += dRe / scale;
+    sumIm -= dIm / scale;
+  }
+  return [sumRe, sumIm];
+}
 
 /** P/P′ of P(w) = z^E·w^n + M(w); null exactly on a root. */
-function newtonRatio(loop: LinearLoop, w: Complex): Complex | null {
+function newtonRatio(loop: LinearLoop, coefficients: readonly number[], w: Complex): Complex | null {
   const exponent = delayExponent(loop);
   const z: Complex = [1 + w[0], w[1]];
-  const forward = evaluatePolynomial(forwardPolynomial(loop), w);
+  const forward = evaluatePolynomial(coefficients, w);
   const integrated = power(w, loop.order - 1);
-  const delayed = exponent > 0 ? power(z, exponent - 1) : ([1, 0] as const);
+  const delayed: Complex = exponent > 0 ? power(z, exponent - 1) : [1, 0];
   const common = multiply(delayed, integrated);
   const value = add(multiply(common, exponent > 0 ? multiply(z, w) : w), forward.value);
   const inner: Complex =

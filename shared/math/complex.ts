@@ -16,24 +16,27 @@ export function divide(a: Complex, b: Complex): Complex {
 
 /** a to a whole power, not negative, by squaring. */
 export function power(a: Complex, exponent: number): Complex {
-  let [result, square, rest]: [Complex, Complex, number] = [[1, 0], a, exponent];
-  while (rest > 0) {
-    if (rest % 2 === 1) result = multiply(result, square);
-    square = multiply(square, square);
-    rest = Math.floor(rest / 2);
+  let [re, im, squareRe, squareIm] = [1, 0, a[0], a[1]];
+  for (let rest = exponent; rest > 0; rest = Math.floor(rest / 2)) {
+    if (rest % 2 === 1) [re, im] = [re * squareRe - im * squareIm, re * squareIm + im * squareRe];
+    [squareRe, squareIm] = [squareRe * squareRe - squareIm * squareIm, 2 * squareRe * squareIm];
   }
-  return result;
+  return [re, im];
 }
 
 /** Value and slope of a polynomial, coefficients real and constant first (Horner). */
-export function evaluatePolynomial(coefficients: readonly number[], at: Complex): { value: Complex; slope: Complex } {
-  let [value, slope]: [Complex, Complex] = [
-    [0, 0],
-    [0, 0],
-  ];
+export function evaluatePolynomial(
+  coefficients: readonly number[],
+  [re, im]: Complex,
+): { value: Complex; slope: Complex } {
+  let [valueRe, valueIm, slopeRe, slopeIm] = [0, 0, 0, 0];
   for (let k = coefficients.length - 1; k >= 0; k -= 1) {
-    slope = add(multiply(slope, at), value);
-    value = add(multiply(value, at), [coefficients[k] as number, 0]);
+    const nextSlope = slopeRe * re - slopeIm * im + valueRe;
+    slopeIm = slopeRe * im + slopeIm * re + valueIm;
+    slopeRe = nextSlope;
+    const nextValue = valueRe * re - valueIm * im + (coefficients[k] as number);
+    valueIm = valueRe * im + valueIm * re;
+    valueRe = nextValue;
   }
-  return { value, slope };
+  return { value: [valueRe, valueIm], slope: [slopeRe, slopeIm] };
 }

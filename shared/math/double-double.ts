@@ -5,7 +5,7 @@ export interface DoubleDouble {
 }
 
 /** Splits a double into two halves of 26 bits (Veltkamp). */
-const splitter = 2 ** 27 + 1;
+export const splitter = 2 ** 27 + 1;
 
 /** The exact sum of two doubles (D. Knuth, The Art of Computer Programming, vol. 2, 4.2.2). */
 export function exactSum(a: number, b: number): DoubleDouble {

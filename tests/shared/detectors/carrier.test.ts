@@ -1,0 +1,118 @@
+import { describe, expect, it } from 'vitest';
+import { carrierDetector } from '../../../shared/detectors/carrier';
+import { sCurve, sCurveShape } from '../../../shared/detectors/detector';
+import { overNoise } from './quadrature';
+
+const ratio = (decibels: number): number => 10 ** (decibels / 10);
+const qpsk = (decibels: number, amplitude = 1) => carrierDetector('sign', 'QPSK', { amplitude, esN0: ratio(decibels) });
+const bpsk = (detector: 'sign' | 'costas', decibels: number, amplitude = 1) =>
+  carrierDetector(detector, 'BPSK', { amplitude, esN0: ratio(decibels) });
+
+describe('sign detector on QPSK', () => {
+  // Derived after U. Mengali, A. D'Andrea 1997; unit amplitude.
+  it.each([
+    [0, 0.2811],
+    [3, 0.6033],
+    [6, 1.0415],
+    [10, 1.388],
+    [15, 1.4142],
+  ])('has its slope at %i dB', (decibels, slope) => {
+    expect(qpsk(decibels).gain).toBeCloseTo(slope, 4);
+  });
+
+  // Independent: E sgn(zI)·zQ − sgn(zQ)·zI and its square, integrated over the noise of both rails.
+  it.each([3, 10])('matches the detector integrated over noise at %i dB', (decibels) => {
+    const deviation = Math.sqrt(1 / (2 * ratio(decibels)));
+    const sign = (mean: number): number => 1 - 2 * overNoise(deviation, (n) => Number(mean + n < 0));
+    const magnitude = overNoise(deviation, (n) => Math.abs(Math.SQRT1_2 + n));
+    for (const x of [-0.6, -0.2, 0.1, 0.5]) {
+      const [re, im] = [Math.cos(x + Math.PI / 4), Math.sin(x + Math.PI / 4)];
+      expect(Math.abs(qpsk(decibels).noisy(x) - (sign(re) * im - sign(im) * re))).toBeLessThan(2e-3);
+    }
+    const variance = 2 * (1 / 2 + deviation ** 2) - 2 * magnitude ** 2;
+    expect(qpsk(decibels).variance).toBeCloseTo(variance, 6);
+  });
+
+  // Derived: var e/Kd² over 1/(2γ).
+  it.each([
+    [20, 1],
+    [15, 1],
+    [12, 1.0023],
+    [10, 1.0354],
+    [3, 4.36],
+  ])('needs %i dB its own share of noise', (decibels, excess) => {
+    const { variance, gain } = qpsk(decibels);
+    expect(Math.abs(((variance as number) / gain ** 2) * 2 * ratio(decibels) - excess)).toBeLessThan(0.005 * excess);
+  });
+
+  it('goes with the amplitude, its variance with the square', () => {
+    expect(qpsk(10, 3).gain).toBeCloseTo(3 * qpsk(10).gain, 14);
+    expect(qpsk(10, 3).variance).toBeCloseTo(9 * (qpsk(10).variance as number), 14);
+  });
+
+  it('repeats every quarter turn', () => {
+    const { noisy, period } = qpsk(6);
+    expect(period).toBe(Math.PI / 2);
+    for (const x of [-0.3, 0.2]) expect(noisy(x + period)).toBeCloseTo(noisy(x), 14);
+  });
+
+  // Derived: the noiseless sign detector has ⟨s²⟩ = 0.1817.
+  it('has the mean square of its noiseless shape', () => {
+    expect(sCurveShape(qpsk(60)).meanSquare).toBeCloseTo(0.1817, 4);
+  });
+});
+
+describe('detectors on BPSK', () => {
+  // Derived: erf √γ.
+  it.each([
+    [0, 0.8427],
+    [3, 0.9542],
+    [6, 0.9952],
+  ])('sign has the slope erf √γ at %i dB', (decibels, slope) => {
+    expect(bpsk('sign', decibels).gain).toBeCloseTo(slope, 3);
+  });
+
+  it('sign leaves the noise of one rail', () => {
+    expect(bpsk('sign', 10, 2).variance).toBeCloseTo(4 / 20, 14);
+  });
+
+  // Published: squaring loss 1 + 1/(2γ).
+  it.each([
+    [0, 1.5],
+    [3, 1.251],
+    [6, 1.126],
+    [10, 1.05],
+  ])('costas has the squaring loss at %i dB', (decibels, loss) => {
+    const { variance, gain } = bpsk('costas', decibels, 1.7);
+    expect(((variance as number) / gain ** 2) * 2 * ratio(decibels)).toBeCloseTo(loss, 3);
+  });
+
+  // Independent: the slope of each curve by differences is the slope that is named.
+  it.each(['sign', 'costas'] as const)('%s names the slope of its own curve', (detector) => {
+    const { noisy, noiseless, gain, gainWithoutNoise } = bpsk(detector, 3, 1.3);
+    expect((noisy(1e-5) - noisy(-1e-5)) / 2e-5).toBeCloseTo(gain, 8);
+    expect((noiseless(1e-5) - noiseless(-1e-5)) / 2e-5).toBeCloseTo(gainWithoutNoise, 8);
+  });
+});
+
+describe('carrierDetector', () => {
+  it.each([
+    ['decision', 'QPSK', '/carrier/detector', 'decision is not worked out yet for QPSK; take sign'],
+    ['costas', 'QPSK', '/carrier/detector', 'costas is for BPSK only; take sign'],
+    ['power-law', 'BPSK', '/carrier/detector', 'power-law is not worked out yet for BPSK; take sign or costas'],
+    ['sign', '8PSK', '/signal/modulation', '8PSK is not worked out yet; take BPSK or QPSK'],
+  ] as const)('refuses %s on %s and says what to take', (detector, modulation, parameter, message) => {
+    const make = (): unknown => carrierDetector(detector, modulation, { amplitude: 1, esN0: 10 });
+    expect(make).toThrow(expect.objectContaining({ parameter, message }));
+  });
+});
+
+describe('sCurve', () => {
+  it('spans one period, lock in the middle', () => {
+    const { x, noisy } = sCurve(qpsk(10), 2);
+    expect(x[0]).toBeCloseTo(-Math.PI / 4, 14);
+    expect(x.at(-1)).toBeCloseTo(Math.PI / 4, 14);
+    expect(noisy[60]).toBeCloseTo(0, 14);
+    expect(noisy[70]).toBeCloseTo(2 * qpsk(10).noisy(x[70]!), 14);
+  });
+});

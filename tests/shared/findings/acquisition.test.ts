@@ -1,0 +1,81 @@
+import { describe, expect, it } from 'vitest';
+import { afterRemedy, carrierFinding, findingsAbout } from './verdicts';
+
+describe('acquisition.ambiguity', () => {
+  it('passes ±77.5 kHz at 27.5 MBd', () => {
+    const finding = carrierFinding('acquisition.ambiguity');
+    expect(finding).toMatchObject({ severity: 'pass', unit: 'MHz', sense: 'max' });
+    expect(finding.limit).toBeCloseTo(3.4375, 12);
+  });
+
+  // Published: 18 kBd QPSK is unambiguous below 2250 Hz.
+  it('fails beyond Rs/8 for QPSK', () => {
+    const parts = { signal: { symbolRateBd: 18e3 }, environment: { carrierTolerancePpm: 0, dopplerHz: 3000 } };
+    const finding = carrierFinding('acquisition.ambiguity', parts);
+    expect(finding).toMatchObject({ severity: 'fail', value: 3, limit: 2.25, unit: 'kHz' });
+    expect(finding.reason).toContain('4.2');
+  });
+
+  it('says nothing where the offset is not known', () => {
+    expect(findingsAbout('acquisition.ambiguity', { environment: { carrierFrequencyHz: undefined } })).toEqual([]);
+  });
+});
+
+describe('acquisition.integrator-range', () => {
+  const limited = (integratorLimitHz: number) => ({ carrier: { arithmetic: { integratorLimitHz } } });
+
+  it('passes a limit that holds the carrier', () => {
+    expect(carrierFinding('acquisition.integrator-range', limited(250e3)).severity).toBe('pass');
+  });
+
+  it('fails a limit that does not, and types one that does', () => {
+    const finding = carrierFinding('acquisition.integrator-range', limited(70e3));
+    expect(finding).toMatchObject({
+      severity: 'fail',
+      title: 'The integrator stops short of the carrier',
+      unit: 'kHz',
+    });
+    expect(finding.value).toBeCloseTo(70, 5);
+    expect(finding.limit).toBeCloseTo(77.5, 9);
+    expect(finding.reason).toContain('2.18 stops short of the carrier offset');
+    expect(finding.change).toEqual({
+      pointer: '/carrier/arithmetic/integratorLimitHz',
+      value: 86_000,
+      label: 'Set 2.18 to ±86 kHz',
+    });
+    expect(afterRemedy(finding, limited(70e3)).severity).toBe('pass');
+  });
+
+  it('widens the word where that is what is short', () => {
+    const parts = { carrier: { arithmetic: { integratorBits: 30 } } };
+    const finding = carrierFinding('acquisition.integrator-range', parts);
+    expect(finding.change!.pointer).toBe('/carrier/arithmetic/integratorBits');
+    expect(afterRemedy(finding, parts).severity).toBe('pass');
+  });
+});
+
+describe('acquisition.pull-in', () => {
+  it('passes the sample link, as an estimate', () => {
+    expect(carrierFinding('acquisition.pull-in')).toMatchObject({ severity: 'pass', estimate: true, limit: 8000 });
+  });
+
+  it('cautions when half the time is gone, and types a wider stage', () => {
+    const parts = {
+      carrier: { stages: [{ name: 'acquire', noiseBandwidth: 0.004 }] },
+      limits: { acquisitionSymbols: 5000 },
+    };
+    const finding = carrierFinding('acquisition.pull-in', parts);
+    expect(finding).toMatchObject({ severity: 'caution', limit: 5000 });
+    expect(finding.reason).toContain('5.6');
+    expect(finding.change!.pointer).toBe('/carrier/stages/0/noiseBandwidth');
+    expect(afterRemedy(finding, parts).severity).toBe('pass');
+  });
+
+  it('does not type a bandwidth that the delay forbids', () => {
+    const parts = {
+      carrier: { delay: 20, stages: [{ name: 'acquire', noiseBandwidth: 0.004 }] },
+      limits: { acquisitionSymbols: 1000 },
+    };
+    expect(carrierFinding('acquisition.pull-in', parts)).toMatchObject({ severity: 'caution', change: null });
+  });
+});

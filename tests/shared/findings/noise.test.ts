@@ -1,0 +1,36 @@
+import { describe, expect, it } from 'vitest';
+import { afterRemedy, carrierFinding, findingsAbout } from './verdicts';
+
+const stages = (noiseBandwidth: number) => [{ name: 'track', noiseBandwidth }];
+
+describe('noise.phase-total', () => {
+  // Independent: 1.961° (scipy quad), limit 3°.
+  it('passes the sample link', () => {
+    const finding = carrierFinding('noise.phase-total');
+    expect(finding).toMatchObject({ severity: 'pass', limit: 3, unit: '° rms' });
+    expect(finding.value).toBeCloseTo(1.961, 3);
+  });
+
+  it('cautions when the oscillator makes most of it, and types the best bandwidth', () => {
+    const parts = { carrier: { stages: stages(0.0009) } };
+    const finding = carrierFinding('noise.phase-total', parts);
+    expect(finding).toMatchObject({ severity: 'caution', title: 'The oscillator makes most of the jitter' });
+    expect(finding.change!.label).toBe('Set 2.7 of track to 0.0034');
+    expect(afterRemedy(finding, parts).severity).toBe('pass');
+  });
+
+  it('fails beyond the limit', () => {
+    const finding = carrierFinding('noise.phase-total', { limits: { phaseJitterDeg: 1.5 } });
+    expect(finding).toMatchObject({ severity: 'fail', limit: 1.5 });
+    expect(
+      carrierFinding('noise.phase-total', { carrier: { stages: stages(0.05) }, signal: { esN0Db: 6 } }),
+    ).toMatchObject({
+      severity: 'fail',
+      title: 'Noise makes most of the jitter',
+    });
+  });
+
+  it('says nothing of a detector whose errors are coloured', () => {
+    expect(findingsAbout('noise.phase-total', { carrier: undefined })).toEqual([]);
+  });
+});
