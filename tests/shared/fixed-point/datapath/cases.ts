@@ -14,6 +14,17 @@ export interface CarrierCase {
   }[];
 }
 
+export interface ClockCase {
+  words: ClockWords;
+  steps: {
+    x: [number, number];
+    interpolants: { kind: string; mu: number; value: [number, number] }[];
+    update?: { e: Stored; acc: Stored; acc2: Stored; w: Stored };
+    stage?: number;
+    eta: Stored;
+  }[];
+}
+
 /**
  * Stimulus and every node for random configurations, worked out outside this project by two implementations
  * (unbounded integers, and C99 with 64-bit integers) that agree with each other.
@@ -24,4 +35,8 @@ export const allWords = all.map(({ words }) => words);
 
 export const carrierCases = all.flatMap((each, index) =>
   each.words.loop === 'carrier' ? [{ name: `${index} ${each.words.detector}`, ...(each as CarrierCase) }] : [],
+);
+
+export const clockCases = all.flatMap((each, index) =>
+  each.words.loop === 'clock' ? [{ name: `${index} ${each.words.detector}`, ...(each as ClockCase) }] : [],
 );
