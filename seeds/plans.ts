@@ -22,8 +22,9 @@ const stages = ({ acquire, track, symbols }: Bandwidths) => [
   { name: 'track', damping: Math.SQRT1_2, noiseBandwidth: track },
 ];
 
-const clock = (bandwidths: Bandwidths) => ({
+const clock = (bandwidths: Bandwidths, delay = 0) => ({
   detector: 'gardner' as const,
+  delay,
   stages: stages(bandwidths),
   arithmetic: { integratorLimitPpm: 100 },
 });
@@ -40,11 +41,11 @@ export const transponder17 = (track: number, integratorLimitHz: number): Plan =>
     nco: { widthBits: 32 },
     arithmetic: { integratorLimitHz },
   },
-  clock: clock({ acquire: 0.002, track: 0.0005, symbols: 8000 }),
+  clock: clock({ acquire: 0.002, track: 0.0005, symbols: 8000 }, 3),
   environment: {
     carrierFrequencyHz: 1.55e9,
     carrierTolerancePpm: 25,
-    clockTolerancePpm: 25,
+    clockTolerancePpm: 20,
     phaseNoise: broadcastMask,
   },
 });

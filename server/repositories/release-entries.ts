@@ -3,6 +3,8 @@ import type { Knex } from 'knex';
 export interface EntryRecord {
   slot: string;
   revisionId: number;
+  /** Target that the revision was saved for. */
+  targetId: number;
   plan: { id: number; name: string };
   /** Number of the plan's newest revision. */
   newest: number;
@@ -11,6 +13,7 @@ export interface EntryRecord {
 interface EntryRow {
   slot: string;
   revision_id: number;
+  target_id: number;
   plan_id: number;
   plan_name: string;
   newest: number;
@@ -19,6 +22,7 @@ interface EntryRow {
 const toEntry = (row: EntryRow): EntryRecord => ({
   slot: row.slot,
   revisionId: row.revision_id,
+  targetId: row.target_id,
   plan: { id: row.plan_id, name: row.plan_name },
   newest: row.newest,
 });
@@ -36,6 +40,7 @@ export function releaseEntriesRepository(db: Knex) {
         .select<EntryRow[]>(
           'release_entries.slot',
           'release_entries.revision_id',
+          'revisions.target_id',
           'plans.id as plan_id',
           'plans.name as plan_name',
           db.raw('(SELECT MAX(number) FROM revisions AS others WHERE others.plan_id = plans.id) AS newest'),

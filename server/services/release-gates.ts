@@ -1,5 +1,6 @@
+import type { EntryRecord } from '../repositories/release-entries';
 import type { ReleaseRecord } from '../repositories/releases';
-import type { StoredRevision } from '../repositories/revisions';
+import type { RevisionRecord } from '../repositories/revisions';
 
 /** One condition of a freeze. */
 export interface Gate {
@@ -10,12 +11,9 @@ export interface Gate {
 }
 
 type Release = Pick<ReleaseRecord, 'targetId' | 'target'>;
-type Revision = Pick<StoredRevision, 'targetId' | 'counts' | 'number'>;
 
-export interface GatedEntry {
-  slot: string;
-  plan: { id: number; name: string };
-  revision: Revision;
+export interface GatedEntry extends Pick<EntryRecord, 'slot' | 'plan' | 'targetId'> {
+  revision: Pick<RevisionRecord, 'counts' | 'number'>;
 }
 
 const named = ({ slot, revision }: GatedEntry): string => `${slot} r${revision.number}`;
@@ -35,7 +33,7 @@ function findingGates(entries: readonly GatedEntry[]): Gate[] {
 }
 
 function targetGates({ targetId, target }: Release, entries: readonly GatedEntry[]): Gate[] {
-  const strange = entries.filter(({ revision }) => revision.targetId !== targetId);
+  const strange = entries.filter((entry) => entry.targetId !== targetId);
   const gates = strange.map((entry) =>
     shut(`${named(entry)} was saved for another target than ${target.name}.`, entry),
   );

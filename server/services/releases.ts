@@ -7,10 +7,9 @@ import { repositories, type Repositories } from '../repositories/index';
 import type { EntryRecord } from '../repositories/release-entries';
 import type { FileEntry, StoredFile } from '../repositories/release-files';
 import type { ReleaseRecord, ReleaseSummary } from '../repositories/releases';
-import type { StoredRevision } from '../repositories/revisions';
 import type { Context } from './context';
 import { gatesOf, type Gate } from './release-gates';
-import { releaseFiles } from './manifest';
+import { releaseFiles, type FilledSlot } from './manifest';
 import { summariesOf, type RevisionSummary } from './revision-summaries';
 import type { SignedIn } from './sessions';
 
@@ -32,28 +31,28 @@ const withoutTargetId = ({ targetId: _targetId, ...summary }: ReleaseRecord): Re
 
 const slotPattern = /^[a-z][a-z0-9_]{0,30}$/;
 
-type Filled = EntryRecord & { revision: StoredRevision };
+type Filled = EntryRecord & { revision: RevisionSummary };
 
-async function filledEntries(releaseId: number, { releaseEntries, revisions }: Repositories): Promise<Filled[]> {
-  const filled: Filled[] = [];
-  for (const entry of await releaseEntries.list(releaseId)) {
-    filled.push({ ...entry, revision: (await revisions.find(entry.revisionId))! });
-  }
-  return filled;
+async function filledEntries(releaseId: number, all: Repositories): Promise<Filled[]> {
+  const entries = await all.releaseEntries.list(releaseId);
+  const records = await all.revisions.listByIds(entries.map(({ revisionId }) => revisionId));
+  const byId = new Map((await summariesOf(records, all)).map((revision) => [revision.id, revision]));
+  return entries.map((entry) => ({ ...entry, revision: byId.get(entry.revisionId)! }));
 }
 
 async function whole(release: ReleaseRecord, all: Repositories): Promise<Release> {
   const filled = await filledEntries(release.id, all);
-  const summaries = await summariesOf(
-    filled.map(({ revision }) => revision),
-    all,
-  );
-  const entries = filled.map(({ slot, plan, newest }, index) => {
-    const revision = summaries[index]!;
+  const entries = filled.map(({ slot, plan, newest, revision }) => {
     return { slot, plan, revision, newer: newest > revision.number ? newest : null };
   });
   const gates = release.state === 'draft' ? gatesOf(release, filled) : [];
   return { ...withoutTargetId(release), entries, gates, files: await all.releaseFiles.list(release.id) };
+}
+
+async function filesOf({ target, version }: ReleaseRecord, entries: readonly Filled[], { revisions }: Repositories) {
+  const slots: FilledSlot[] = [];
+  for (const { slot, revisionId } of entries) slots.push({ slot, revision: (await revisions.find(revisionId))! });
+  return releaseFiles({ target, version, entries: slots });
 }
 
 /** The draft, its version raised and its row locked until the transaction ends. */
@@ -171,7 +170,7 @@ export function releasesService({ db, clock }: Context) {
         const release = await openDraft(id, version, all);
         const entries = await filledEntries(id, all);
         requireFreezable(release, typed, entries);
-        const files = releaseFiles({ target: release.target, version: release.version, entries });
+        const files = await filesOf(release, entries, all);
         const digest = files.at(-1)!.sha256;
         await all.releaseFiles.insert(id, files);
         await all.releases.freeze(id, version + 1, { digest, personId: by.id, at: clock() });

@@ -1,3 +1,4 @@
+import { setTimeout as sleep } from 'node:timers/promises';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { startTestServer, type TestServer } from '../support/test-server';
 import { createRevision, createTarget } from '../support/receivers';
@@ -112,18 +113,28 @@ describe('the application’s own database user', () => {
   });
 });
 
-describe('an entry that is added while a freeze is under way', () => {
-  it('waits for it and is refused', async () => {
-    const id = await release('1.2.0');
-    let added: Promise<string>;
+describe('a change of the config set while a freeze is under way', () => {
+  it.each([
+    ['1.2.0', "INSERT INTO release_entries VALUES (:id, 'late', :revision)"],
+    ['1.2.1', "UPDATE release_entries SET slot = 'late' WHERE release_id = :id"],
+    ['1.2.2', 'DELETE FROM release_entries WHERE release_id = :id'],
+  ])('waits for it and is refused: %s %s', async (version, sql) => {
+    const id = await release(version);
+    let changed: Promise<string>;
     await server.db.transaction(async (trx) => {
       await trx('releases').where({ id }).forUpdate().first();
-      added = sqlState(`INSERT INTO release_entries VALUES (${id}, 'late', :revision)`);
-      const { engineer } = server.people;
-      const row = { state: 'frozen', frozen_by: engineer.id, frozen_at: new Date(), digest: '0'.repeat(64) };
+      changed = sqlState(sql.replace(':id', String(id)));
+      const row = {
+        state: 'frozen',
+        frozen_by: server.people.release.id,
+        frozen_at: new Date(),
+        digest: '0'.repeat(64),
+      };
+      await sleep(200); // the other statement now waits; without the lock it would be done
       await trx('releases').where({ id }).update(row);
     });
-    expect(await added!).toBe('45000');
+    expect(await changed!).toBe('45000');
+    expect(await server.db('release_entries').where({ release_id: id }).pluck('slot')).toEqual(['main']);
   });
 });
 
