@@ -124,20 +124,21 @@ export function replaysService({ db, clock, replayQueue }: Context, events: Repl
      */
     async follow(id: number, after: number, stream: Stream): Promise<() => void> {
       const waiting: ReplayEvent[] = [];
-      const write = writerOf(stream, after);
       let listener: ReplayListener = (event) => void waiting.push(event);
       // Listening begins before reading: nothing that happens in between is lost, and the writer drops what comes twice.
       const stop = events.subscribe(id, (event) => listener(event));
       try {
         const replay = await find(id);
-        for (const stored of await replays.points(id, after)) write({ type: 'point', ...stored });
+        const from = Math.min(after, replay.pointsDone); // fewer than the reader has: a new engine began again
+        const write = writerOf(stream, from);
+        for (const stored of await replays.points(id, from)) write({ type: 'point', ...stored });
         write({ type: 'state', replay });
+        waiting.forEach(write);
+        listener = write;
       } catch (error) {
         stop();
         throw error;
       }
-      listener = write;
-      waiting.forEach(write);
       return stop;
     },
   };
