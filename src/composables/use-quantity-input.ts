@@ -2,6 +2,7 @@ import { computed, onScopeDispose, ref, watch } from 'vue';
 import { formatQuantity, quantityText } from '../../shared/quantities/format';
 import { stepLastDigit } from '../../shared/quantities/step';
 import type { QuantityEmits, QuantityProps } from '../components/quantity-props';
+import { afterPress } from './after-press';
 import { checkQuantity } from './quantity-check';
 
 /** A field is marked wrong only after this rest, or on leaving; milliseconds. */
@@ -116,7 +117,7 @@ export function useQuantityInput(
   const on = {
     input: (event: Event) => type((event.target as HTMLInputElement).value),
     focus: () => (focused.value = true),
-    blur: leave,
+    blur: () => afterPress(leave),
     keydown: onKeydown,
   };
   const wasText = computed(() => (edited.value ? wasSentence(props) : undefined));
