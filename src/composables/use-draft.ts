@@ -9,7 +9,7 @@ import {
   type Ref,
   type ShallowRef,
 } from 'vue';
-import { planChanges, settled, type Change } from '../../shared/plan/changes';
+import { planChanges, settled, withChanges, type Change } from '../../shared/plan/changes';
 import { valueAt, withValue } from '../../shared/plan/pointer';
 import type { Fault } from '../api/client';
 import type { Draft, DraftPlan } from '../api/plans';
@@ -17,7 +17,8 @@ import type { Draft, DraftPlan } from '../api/plans';
 /** An act that can be taken back as a whole, unlike a typed digit. */
 export interface Undo {
   said: string;
-  plan: DraftPlan;
+  /** What the act changed: only that is undone, not what was typed after it. */
+  changes: Change[];
 }
 
 /** The plan under edit, beside the revision that it starts from. */
@@ -35,6 +36,8 @@ export interface DraftSession {
   faults: ShallowRef<readonly Fault[]>;
   changes: ComputedRef<Change[]>;
   undo: ShallowRef<Undo | null>;
+  /** Grows when unread text was dropped: the form then shows the values anew. */
+  texts: Ref<number>;
   /** Why nothing can be typed; undefined when it can. */
   locked: Ref<string | undefined>;
   value(pointer: string): unknown;
@@ -46,6 +49,8 @@ export interface DraftSession {
   setText(pointer: string, text: string | undefined, why: string | undefined): void;
   /** Drops what could not be read at a pointer and below it: another value takes its place. */
   forget(pointer: string): void;
+  /** Brings back what the revision holds. */
+  restore(pointer: string): void;
   /** Changes the plan in one step that `takeBack` undoes. */
   act(said: string, change: (plan: DraftPlan) => DraftPlan): void;
   takeBack(): void;
@@ -77,6 +82,7 @@ export function createDraft(): DraftSession {
   const faults = shallowRef<readonly Fault[]>([]);
   const undo = shallowRef<Undo | null>(null);
   const locked = ref<string>();
+  const texts = ref(0);
 
   const baseName = computed(() => (basedOn.value > 0 ? `r${basedOn.value}` : undefined));
   const changes = computed(() => (base.value ? planChanges(base.value, plan.value) : []));
@@ -90,16 +96,22 @@ export function createDraft(): DraftSession {
     misread.value = withEntry(misread.value, pointer, why);
   }
   function forget(pointer: string) {
+    if (Object.keys(typed.value).some((unread) => lies(unread, pointer))) texts.value += 1;
     typed.value = without(typed.value, pointer);
     misread.value = without(misread.value, pointer);
   }
   function act(said: string, change: (plan: DraftPlan) => DraftPlan) {
-    undo.value = { said, plan: plan.value };
-    plan.value = change(plan.value);
+    const changed = change(plan.value);
+    undo.value = { said, changes: planChanges(plan.value, changed) };
+    plan.value = changed;
   }
   function takeBack() {
-    if (undo.value) plan.value = undo.value.plan;
+    if (undo.value) plan.value = withChanges(plan.value, undo.value.changes, 'before');
     undo.value = null;
+  }
+  function restore(pointer: string) {
+    forget(pointer);
+    set(pointer, valueAt(base.value, pointer));
   }
   function open(opened: DraftPlan, from: DraftPlan | null, draft: Pick<Draft, 'basedOn' | 'typed'>) {
     [plan.value, base.value, basedOn.value, typed.value] = [opened, from, draft.basedOn, draft.typed];
@@ -107,8 +119,8 @@ export function createDraft(): DraftSession {
   }
 
   return {
-    ...{ plan, base, basedOn, baseName, typed, misread, faults, changes, undo, locked },
-    ...{ set, setText, forget, act, takeBack, open },
+    ...{ plan, base, basedOn, baseName, typed, misread, faults, changes, undo, locked, texts },
+    ...{ set, setText, forget, restore, act, takeBack, open },
     value: (pointer) => settled(plan.value, pointer),
     was: (pointer) => settled(base.value ?? undefined, pointer),
     edited: (pointer) => pointers.value.has(pointer),

@@ -34,7 +34,8 @@ export function fieldText(pointer: string, value: unknown): string {
   const look = lookOf(pointer);
   const option = look.options.find((each) => each.value === value);
   if (option) return option.label;
-  return typeof value === 'number' ? numberOf(pointer, value) : String(value as string | boolean);
+  if (typeof value === 'number') return numberOf(pointer, value);
+  return typeof value === 'string' ? value : '';
 }
 
 function numberOf(pointer: string, value: number): string {

@@ -2,7 +2,6 @@ import type { Design, Finding, LoopDesign } from '../../../shared/model/design';
 import { fieldNumber, fieldOf } from '../../../shared/plan/fields';
 import { numberText } from '../../../shared/quantities/format';
 import type { Freshness } from '../../composables/use-design';
-import type { Count, Freshness as Shown } from '../KsVerdict.vue';
 import { countsOf, severities, worstOf } from './verdict-of';
 
 export interface SheetState {
@@ -20,7 +19,7 @@ export function fieldName(pointer: string): string {
   return field ? `${field.no} ${field.label}` : pointer.replace(/^\//, '');
 }
 
-export const verdictCounts = (design: Design | null): Count[] => {
+export const verdictCounts = (design: Design | null): { state: Finding['severity']; count: number }[] => {
   if (!design) return [];
   const counts = countsOf(design);
   return severities.filter((state) => counts[state] > 0).map((state) => ({ state, count: counts[state] }));
@@ -72,7 +71,8 @@ function jitterOf({ budget }: LoopDesign): string | undefined {
 const marginOf = (degrees: number | null): string | undefined =>
   degrees === null ? undefined : `${numberText(degrees, { decimals: 1 })}° margin`;
 
-export function shownFreshness({ freshness, design }: SheetState): Shown | undefined {
+/** The freshness as the strip shows it; nothing while there is nothing to be fresh. */
+export function shownFreshness({ freshness, design }: SheetState): { state: Exclude<Freshness, 'none'> } | undefined {
   if (freshness === 'none') return design ? { state: 'stale' } : undefined;
   return { state: freshness };
 }

@@ -1,0 +1,79 @@
+import { describe, expect, it } from 'vitest';
+import { loopFigures } from '../../../../src/components/plan/figures/loop-figures';
+import { keepsUpTo } from '../../../../src/components/plan/figures/margin-figure';
+import { crossingHz } from '../../../../src/components/plan/figures/response-figure';
+import { examplePlan } from '../../../../src/components/plans/example-plan';
+import { design } from '../../support/plan';
+
+const worked = design();
+const carrier = loopFigures(worked, 'carrier');
+const figure = (number: number) => carrier.find((each) => each.figure === number)!;
+
+describe('loopFigures', () => {
+  it('numbers six figures of a carrier loop', () => {
+    expect(carrier.map((each) => each.figure)).toEqual([1, 2, 3, 4, 5, 6]);
+  });
+
+  it('keeps the numbers of the others where a budget is missing', () => {
+    expect(loopFigures(worked, 'clock').map((each) => each.figure)).toEqual([1, 2, 3, 4, 6]);
+  });
+
+  it('has none for a loop that is not there', () => {
+    const { clock: _clock, ...alone } = examplePlan('corvid-c2');
+    expect(loopFigures(design(alone), 'clock')).toEqual([]);
+  });
+
+  // Sign detector on QPSK: √2 without noise, 1.3880 at 10 dB (Mengali & D'Andrea 1997); nulls every 90°.
+  it('says what noise does to the slope', () => {
+    expect(figure(4).caption).toContain('from 1.414 to 1.388; stable nulls every 90°');
+  });
+
+  // A separate integration of mask and noise (40 000 frequencies, complex arithmetic, γ = 10) gives
+  // 1.953° at BnT 0.0034 as the least and 1.961° at 0.004.
+  it('says where the jitter is least', () => {
+    expect(figure(5).caption).toBe('The total is least, 1.95°, at BnT 0.0034; track has 1.96° of at most 3.00°.');
+  });
+
+  // Phase margin at BnT 0.01: 61.4° at D = 2 and 56.4° at D = 5 (derived); D = 3 lies between.
+  it('says the margins at the delay of the plan', () => {
+    const [, acquire] = /acquire ([\d.]+)°/.exec(figure(6).caption)!;
+    expect(figure(6).caption).toContain('At delay 3 ');
+    expect(Number(acquire)).toBeGreaterThan(56.4);
+    expect(Number(acquire)).toBeLessThan(61.4);
+  });
+
+  it('counts the poles that the delay adds', () => {
+    expect(figure(3).caption).toContain('3 more of each stage');
+  });
+
+  it('says it when a stage never settles', () => {
+    const plan = examplePlan('corvid-c2');
+    const far = design({ ...plan, carrier: { ...plan.carrier!, delay: 60 } });
+    const captions = loopFigures(far, 'carrier').map(({ caption }) => caption);
+    expect(captions[0]).toContain('Acquire never settles');
+    expect(captions[2]).toContain('the loop is unstable');
+  });
+});
+
+describe('crossingHz', () => {
+  // Both change by 20 dB a decade: from 0 against −20 dB at 10 Hz to −20 against 0 dB at 1 kHz they meet at 100 Hz.
+  it('is where two straight lines on the log axis meet', () => {
+    const response = { frequency: [], frequencyHz: [10, 1000], hDb: [0, -20], eDb: [-20, 0] };
+    expect(crossingHz({ response })).toBeCloseTo(100, 9);
+  });
+
+  it('is none where H stays above', () => {
+    expect(
+      crossingHz({ response: { frequency: [], frequencyHz: [1, 2], hDb: [0, 0], eDb: [-9, -9] } }),
+    ).toBeUndefined();
+  });
+});
+
+describe('keepsUpTo', () => {
+  const marginAgainstDelay = { delay: [0, 1, 2, 3], phaseDeg: [60, 50, 40, null] };
+  it('is the last delay that holds the limit', () => {
+    expect(keepsUpTo({ marginAgainstDelay }, 45)).toBe(1);
+    expect(keepsUpTo({ marginAgainstDelay }, 70)).toBeUndefined();
+    expect(keepsUpTo({ marginAgainstDelay }, 30)).toBe(2);
+  });
+});
