@@ -20,6 +20,7 @@ const loopTitle = { carrier: 'Carrier loop', clock: 'Clock loop' } as const;
 const stageComment = (loop: LoopName, stage: StageDesign): string[] =>
   comment([
     `${loopTitle[loop]}, stage ${stage.name}`,
+    ...(stage.stable ? [] : ['  UNSTABLE with its delay: do not use']),
     achieved('BnT, cycles per symbol', stage.noiseBandwidth, stage.bandwidthError),
     achieved('Bn, Hz', stage.noiseBandwidthHz, null),
     achieved('zeta', stage.damping, stage.dampingError),

@@ -167,6 +167,14 @@ describe('configHeader', () => {
     expect(configHeader(input({ plan: shuffled }))).toBe(configHeader(input()));
   });
 
+  it('warns of a stage that is unstable', () => {
+    const [acquire, ...others] = design.carrier!.stages;
+    const unstable = { ...design.carrier!, stages: [{ ...acquire!, stable: false }, ...others] };
+    const text = configHeader(input({ design: { carrier: unstable } }));
+    expect(text.match(/UNSTABLE/g)).toHaveLength(1);
+    expect(text).toContain('Carrier loop, stage acquire\n *   UNSTABLE with its delay');
+  });
+
   it('says where it comes from and what must be done before use', () => {
     const header = configHeader(input({ release: '2.4.0' }));
     for (const text of ['Product: Keepstep', 'Engine: 1.0.0', 'Revision: 14', 'Release: 2.4.0', `sha256 ${digest}`]) {
