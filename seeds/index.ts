@@ -23,7 +23,7 @@ type ConfigSet = Record<string, Revision>;
 async function seedRelease({ releases }: Services, by: SignedIn, version: string, set: ConfigSet): Promise<number> {
   let release = await releases.create('corvid-c2', version, by);
   for (const [slot, { id }] of Object.entries(set)) {
-    release = await releases.putEntry(release.id, release.rowVersion, slot, id, by);
+    release = await releases.putEntry({ id: release.id, version: release.rowVersion, by }, slot, id);
   }
   return release.id;
 }
@@ -63,7 +63,7 @@ export async function seedDemo(services: Services, password: string): Promise<vo
   const set = { dl_qpsk: limited!, beacon: beaconSaved!, ranging: rangingSaved! };
   const id = await seedRelease(services, release, '2.3.0', set);
   const { rowVersion } = await services.releases.get(id);
-  await services.releases.freeze(id, rowVersion, '2.3.0', release);
+  await services.releases.freeze({ id, version: rowVersion, by: release }, '2.3.0');
   await seedRelease(services, release, '2.4.0', { ...set, dl_qpsk: narrow! });
   await services.replays.create({ revisionId: narrow!.id, check: withDefaults('tolerance-check', bothEnds) }, tester);
 }

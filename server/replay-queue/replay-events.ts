@@ -1,6 +1,6 @@
 import { EventEmitter } from 'node:events';
 import type { ReplayPoint } from '../../shared/model/replay-point';
-import type { ReplaySummary } from '../repositories/replays';
+import type { ReplaySummary } from '../repositories/replay-rows';
 
 /** What followers of a replay are told: its state, a finished point with its place in the order, or that the server ends. */
 export type ReplayEvent =

@@ -7,6 +7,7 @@ import { plansRepository } from './plans';
 import { releaseEntriesRepository } from './release-entries';
 import { releaseFilesRepository } from './release-files';
 import { releasesRepository } from './releases';
+import { replayPointsRepository } from './replay-points';
 import { replaysRepository } from './replays';
 import { revisionsRepository } from './revisions';
 import { searchRepository } from './search';
@@ -23,6 +24,7 @@ export const repositories = (db: Knex) => ({
   releaseEntries: releaseEntriesRepository(db),
   releaseFiles: releaseFilesRepository(db),
   releases: releasesRepository(db),
+  replayPoints: replayPointsRepository(db),
   replays: replaysRepository(db),
   revisions: revisionsRepository(db),
   search: searchRepository(db),

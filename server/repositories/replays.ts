@@ -1,97 +1,13 @@
 import type { Knex } from 'knex';
-import type { ReplayPoint } from '../../shared/model/replay-point';
-import type { ToleranceCheck } from '../../shared/model/tolerance-check';
 import { paged, type Page } from '../page';
-import { iso, isoOrNull, parsed } from './columns';
-import type { PersonName } from './people';
-import type { TargetName } from './plans';
-
-export type ReplayState = 'queued' | 'running' | 'done' | 'failed' | 'cancelled';
-export type Verdict = 'pass' | 'fail' | 'undecided';
-
-export interface ReplaySummary {
-  id: number;
-  revision: { id: number; number: number; plan: { id: number; name: string }; target: TargetName };
-  check: ToleranceCheck;
-  state: ReplayState;
-  by: PersonName;
-  createdAt: string;
-  startedAt: string | null;
-  finishedAt: string | null;
-  pointsDone: number;
-  pointsTotal: number;
-  verdict: Verdict | null;
-  digest: string | null;
-  engine: string;
-  error: string | null;
-}
-
-export interface NewReplay {
-  revisionId: number;
-  check: ToleranceCheck;
-  engine: string;
-  pointsTotal: number;
-  personId: number;
-  at: Date;
-}
-
-/** How the replays of a revision stand. */
-export interface ReplaysOfRevision {
-  total: number;
-  lastVerdict: Verdict | null;
-  lastId: number | null;
-}
-
-export interface StoredPoint {
-  /** Place in the order in which the points were finished, from 1. */
-  sequence: number;
-  point: ReplayPoint;
-}
-
-interface ReplayRow {
-  id: number;
-  revision_id: number;
-  revision_number: number;
-  plan_id: number;
-  plan_name: string;
-  target_slug: string;
-  target_name: string;
-  tolerance_check: unknown;
-  state: ReplayState;
-  requested_by: number;
-  requested_by_name: string;
-  created_at: Date;
-  started_at: Date | null;
-  finished_at: Date | null;
-  points_done: number;
-  points_total: number;
-  verdict: Verdict | null;
-  digest: string | null;
-  engine: string;
-  error: string | null;
-}
-
-const toSummary = (row: ReplayRow): ReplaySummary => ({
-  id: row.id,
-  revision: {
-    id: row.revision_id,
-    number: row.revision_number,
-    plan: { id: row.plan_id, name: row.plan_name },
-    target: { slug: row.target_slug, name: row.target_name },
-  },
-  check: parsed<ToleranceCheck>(row.tolerance_check),
-  state: row.state,
-  by: { id: row.requested_by, name: row.requested_by_name },
-  createdAt: iso(row.created_at),
-  startedAt: isoOrNull(row.started_at),
-  finishedAt: isoOrNull(row.finished_at),
-  pointsDone: row.points_done,
-  pointsTotal: row.points_total,
-  verdict: row.verdict,
-  digest: row.digest,
-  engine: row.engine,
-  error: row.error,
-});
+import {
+  toSummary,
+  type NewReplay,
+  type ReplayRow,
+  type ReplaysOfRevision,
+  type ReplaySummary,
+  type Verdict,
+} from './replay-rows';
 
 interface Finish {
   state: 'done' | 'failed' | 'cancelled';
@@ -167,31 +83,10 @@ export function replaysRepository(db: Knex) {
       const running = replays().where({ state: 'running' });
       await (id === undefined ? running : running.where({ id })).update({ state: 'queued' });
     },
-    /** Throws its points away, for another engine to begin again. */
-    async restart(id: number, engine: string): Promise<void> {
-      await db('replay_points').where({ replay_id: id }).delete();
-      await replays().where({ id }).update({ engine, points_done: 0 });
-    },
     /** False when it had ended before. */
     async finish(id: number, { at, state, verdict, digest, error }: Finish): Promise<boolean> {
       const row = { state, verdict: verdict ?? null, digest: digest ?? null, error: error ?? null, finished_at: at };
       return (await replays().where({ id }).whereIn('state', ['queued', 'running']).update(row)) === 1;
-    },
-    async points(id: number, after = 0): Promise<StoredPoint[]> {
-      const rows = db('replay_points').where({ replay_id: id }).where('sequence', '>', after).orderBy('sequence');
-      const read = await rows.select<{ sequence: number; result: unknown }[]>('sequence', 'result');
-      return read.map(({ sequence, result }) => ({ sequence, point: parsed<ReplayPoint>(result) }));
-    },
-    /** Stores a finished point and gives it the next place; undefined when the replay does not run any more. */
-    async appendPoint(id: number, point: ReplayPoint): Promise<number | undefined> {
-      const running = replays().where({ id, state: 'running' });
-      const row = await running.forUpdate().first<{ points_done: number } | undefined>('points_done');
-      if (!row) return undefined;
-      const sequence = row.points_done + 1;
-      const result = JSON.stringify(point);
-      await db('replay_points').insert({ replay_id: id, point_index: point.index, sequence, result });
-      await replays().where({ id }).update({ points_done: sequence });
-      return sequence;
     },
     async remove(id: number): Promise<boolean> {
       return (await replays().where({ id, state: 'queued' }).delete()) === 1;

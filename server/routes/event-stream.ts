@@ -1,6 +1,6 @@
 import type { Request, Response } from 'express';
 import { invalidAt } from '../errors';
-import type { Stream, StreamEvent } from '../services/replays';
+import type { Stream, StreamEvent } from '../services/replay-stream';
 
 /** Proxies close a connection that is silent for longer, ms. */
 const heartbeat = 15_000;

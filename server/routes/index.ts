@@ -29,7 +29,7 @@ export function apiRoutes(services: Services, { secure, demo }: RouteOptions): R
     ...designsRoutes(services.designs),
     ...revisionsRoutes(services.revisions),
     ...releasesRoutes(services.releases),
-    ...replaysRoutes(services.replays),
+    ...replaysRoutes(services.replays, services.replayStreams),
     ...searchRoutes(services.search),
   ];
   return routes;

@@ -4,11 +4,18 @@ import type { ReleaseEntry } from '../../shared/model/release-entry';
 import type { ReleaseFreeze } from '../../shared/model/release-freeze';
 import { idOf, nameOf, pageOf, personOf, queryOf, versionOf } from '../request';
 import type { StoredFile } from '../services/files';
+import type { DraftChange } from '../services/release-drafts';
 import type { Release, ReleasesService } from '../services/releases';
 import { everyone, paging, tagged, type Route } from './route';
 import { sendTextFile } from './text-file';
 
 const manager = ['release'] as const;
+
+const changeOf = (req: Request): DraftChange => ({
+  id: idOf(req, 'release'),
+  version: versionOf(req),
+  by: personOf(req),
+});
 
 const send = (res: Response, release: Release) => void tagged(res, release.rowVersion).json(release);
 
@@ -68,7 +75,7 @@ const ofOne = (releases: ReleasesService): Route[] => [
     ifMatch: true,
     status: 204,
     async handle(req, res) {
-      await releases.remove(idOf(req, 'release'), versionOf(req), personOf(req));
+      await releases.remove(changeOf(req));
       res.status(204).end();
     },
   },
@@ -81,7 +88,7 @@ const ofOne = (releases: ReleasesService): Route[] => [
     ifMatch: true,
     async handle(req, res) {
       const { version } = req.body as ReleaseFreeze;
-      send(res, await releases.freeze(idOf(req, 'release'), versionOf(req), version, personOf(req)));
+      send(res, await releases.freeze(changeOf(req), version));
     },
   },
 ];
@@ -96,8 +103,7 @@ const entries = (releases: ReleasesService): Route[] => [
     ifMatch: true,
     async handle(req, res) {
       const { revisionId } = req.body as ReleaseEntry;
-      const slot = nameOf(req, 'slot', 'slot');
-      send(res, await releases.putEntry(idOf(req, 'release'), versionOf(req), slot, revisionId, personOf(req)));
+      send(res, await releases.putEntry(changeOf(req), nameOf(req, 'slot', 'slot'), revisionId));
     },
   },
   {
@@ -107,8 +113,7 @@ const entries = (releases: ReleasesService): Route[] => [
     summary: 'Empty a slot of a draft',
     ifMatch: true,
     async handle(req, res) {
-      const slot = nameOf(req, 'slot', 'slot');
-      send(res, await releases.removeEntry(idOf(req, 'release'), versionOf(req), slot, personOf(req)));
+      send(res, await releases.removeEntry(changeOf(req), nameOf(req, 'slot', 'slot')));
     },
   },
 ];

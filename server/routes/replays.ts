@@ -1,14 +1,15 @@
 import type { ReplayCreate } from '../../shared/model/replay-create';
 import { invalidAt } from '../errors';
 import { countOf, idOf, pageOf, personOf } from '../request';
+import type { ReplayStreamsService } from '../services/replay-stream';
 import type { ReplaysService } from '../services/replays';
 import { eventStream, lastEventIdOf } from './event-stream';
 import { everyone, paging, type Route } from './route';
 
 const testers = ['engineer', 'tester'] as const;
 
-export function replaysRoutes(replays: ReplaysService): Route[] {
-  return [...listAndCreate(replays), ...ofOne(replays), ...watching(replays)];
+export function replaysRoutes(replays: ReplaysService, streams: ReplayStreamsService): Route[] {
+  return [...listAndCreate(replays), ...ofOne(replays), ...watching(replays, streams)];
 }
 
 const listAndCreate = (replays: ReplaysService): Route[] => [
@@ -68,7 +69,7 @@ const ofOne = (replays: ReplaysService): Route[] => [
   },
 ];
 
-const watching = (replays: ReplaysService): Route[] => [
+const watching = (replays: ReplaysService, streams: ReplayStreamsService): Route[] => [
   {
     method: 'get',
     path: '/replays/:id/events',
@@ -78,7 +79,7 @@ const watching = (replays: ReplaysService): Route[] => [
     async handle(req, res) {
       let stop = () => {};
       const stream = eventStream(res, () => stop());
-      stop = await replays.follow(idOf(req, 'replay'), lastEventIdOf(req), stream);
+      stop = await streams.follow(idOf(req, 'replay'), lastEventIdOf(req), stream);
       if (res.closed || res.writableEnded) stop();
     },
   },

@@ -7,6 +7,7 @@ import { peopleService } from './people';
 import { plansService } from './plans';
 import { releasesService } from './releases';
 import { replayStore } from './replay-store';
+import { replayStreamsService } from './replay-stream';
 import { replaysService } from './replays';
 import { revisionsService } from './revisions';
 import { searchService } from './search';
@@ -32,6 +33,7 @@ export function createServices(base: Omit<Context, 'replayQueue'>, queueOver: (s
     replayEvents: events,
     replayQueue,
     replays: replaysService(context, events),
+    replayStreams: replayStreamsService(base.db, events),
     revisions: revisionsService(context),
     search: searchService(context),
     sessions: sessionsService(context),

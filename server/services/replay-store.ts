@@ -5,7 +5,7 @@ import { overallVerdict } from '../../shared/replay/verdict';
 import { inTransaction } from '../db';
 import type { ReplayEvents } from '../replay-queue/replay-events';
 import type { ReplayStore, TakenReplay } from '../replay-queue/replay-queue';
-import type { ReplaySummary } from '../repositories/replays';
+import type { ReplaySummary } from '../repositories/replay-rows';
 import { repositories } from '../repositories/index';
 import type { Context } from './context';
 import { digestOf } from './digest';
@@ -16,7 +16,7 @@ export function replayStore(
   { db, clock, logger }: Pick<Context, 'db' | 'clock' | 'logger'>,
   events: ReplayEvents,
 ): ReplayStore {
-  const { replays, revisions } = repositories(db);
+  const { replayPoints, replays, revisions } = repositories(db);
 
   async function tell(id: number): Promise<void> {
     const replay = await replays.find(id);
@@ -37,8 +37,8 @@ export function replayStore(
   async function taken(replay: ReplaySummary): Promise<TakenReplay> {
     const job = await jobOfReplay(replay);
     // Points of two engines make no evidence: what an older one left is thrown away.
-    if (replay.engine !== engineVersion) await replays.restart(replay.id, engineVersion);
-    const done = new Set((await replays.points(replay.id)).map(({ point }) => point.index));
+    if (replay.engine !== engineVersion) await replayPoints.restart(replay.id, engineVersion);
+    const done = new Set((await replayPoints.list(replay.id)).map(({ point }) => point.index));
     const all = Array.from({ length: pointCount(job) }, (_, index) => index);
     return { id: replay.id, job, remaining: all.filter((index) => !done.has(index)) };
   }
@@ -59,7 +59,7 @@ export function replayStore(
       }
     },
     async append(id, point) {
-      const sequence = await inTransaction(db, (trx) => repositories(trx).replays.appendPoint(id, point));
+      const sequence = await inTransaction(db, (trx) => repositories(trx).replayPoints.append(id, point));
       if (sequence === undefined) return false;
       events.publish(id, { type: 'point', sequence, point });
       return true;
@@ -67,7 +67,7 @@ export function replayStore(
     async finish(id) {
       const replay = (await replays.find(id))!;
       const job = await jobOfReplay(replay);
-      const points = (await replays.points(id)).map(({ point }) => point).sort((a, b) => a.index - b.index);
+      const points = (await replayPoints.list(id)).map(({ point }) => point).sort((a, b) => a.index - b.index);
       const verdict = overallVerdict(points, pointCount(job));
       const digest = digestOf(digestContent(job, engineVersion, points));
       await replays.finish(id, { state: 'done', verdict, digest, at: clock() });

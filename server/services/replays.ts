@@ -6,8 +6,8 @@ import type { ReplayTrace } from '../../shared/replay/trace';
 import { inTransaction } from '../db';
 import { conflict, forbidden, invalidAt, notFound } from '../errors';
 import { itemsOf, type Items, type Page } from '../page';
-import type { ReplayEvent, ReplayEvents, ReplayListener } from '../replay-queue/replay-events';
-import type { ReplaySummary } from '../repositories/replays';
+import type { ReplayEvents } from '../replay-queue/replay-events';
+import type { ReplaySummary } from '../repositories/replay-rows';
 import { repositories } from '../repositories/index';
 import type { Context } from './context';
 import { jobOf } from './replay-job';
@@ -23,37 +23,8 @@ export interface Request {
   check: ToleranceCheck;
 }
 
-/** An event of a stream; `id` is what Last-Event-ID names when the stream is taken up again. */
-export interface StreamEvent {
-  id: number;
-  type: 'state' | 'point';
-  data: object;
-}
-
-export interface Stream {
-  send(event: StreamEvent): void;
-  end(): void;
-}
-
-export const hasEnded = ({ state }: ReplaySummary): boolean => state !== 'queued' && state !== 'running';
-
-/** Writes events to a stream in order and each point once. */
-function writerOf(stream: Stream, after: number) {
-  let last = after;
-  return (event: ReplayEvent): void => {
-    if (event.type === 'end') return stream.end();
-    if (event.type === 'state') {
-      stream.send({ id: last, type: 'state', data: event.replay });
-      if (hasEnded(event.replay)) stream.end();
-    } else if (event.sequence > last) {
-      last = event.sequence;
-      stream.send({ id: last, type: 'point', data: event.point });
-    }
-  };
-}
-
 export function replaysService({ db, clock, replayQueue }: Context, events: ReplayEvents) {
-  const { replays } = repositories(db);
+  const { replayPoints, replays } = repositories(db);
 
   async function find(id: number): Promise<ReplaySummary> {
     const replay = await replays.find(id);
@@ -63,7 +34,7 @@ export function replaysService({ db, clock, replayQueue }: Context, events: Repl
 
   async function get(id: number): Promise<Replay> {
     const replay = await find(id);
-    const points = (await replays.points(id)).map(({ point }) => point);
+    const points = (await replayPoints.list(id)).map(({ point }) => point);
     return { ...replay, points: points.sort((one, other) => one.index - other.index) };
   }
 
@@ -115,31 +86,6 @@ export function replaysService({ db, clock, replayQueue }: Context, events: Repl
       if (trial >= check.trials!) throw invalidAt('/trial', `must be below ${check.trials}`);
       const stored = await repositories(db).revisions.find(revision.id);
       return replayQueue.trace(jobOf(stored!, check), point, trial);
-    },
-    /**
-     * Streams a replay: the points after `after` that are stored, its state, then what happens to it, until it ends.
-     *
-     * @param after place of the last point that the reader has
-     * @returns stops listening
-     */
-    async follow(id: number, after: number, stream: Stream): Promise<() => void> {
-      const waiting: ReplayEvent[] = [];
-      let listener: ReplayListener = (event) => void waiting.push(event);
-      // Listening begins before reading: nothing that happens in between is lost, and the writer drops what comes twice.
-      const stop = events.subscribe(id, (event) => listener(event));
-      try {
-        const replay = await find(id);
-        const from = Math.min(after, replay.pointsDone); // fewer than the reader has: a new engine began again
-        const write = writerOf(stream, from);
-        for (const stored of await replays.points(id, from)) write({ type: 'point', ...stored });
-        write({ type: 'state', replay });
-        waiting.forEach(write);
-        listener = write;
-      } catch (error) {
-        stop();
-        throw error;
-      }
-      return stop;
     },
   };
 }

@@ -1,5 +1,5 @@
 import type { Repositories } from '../repositories/index';
-import type { ReplaysOfRevision } from '../repositories/replays';
+import type { ReplaysOfRevision } from '../repositories/replay-rows';
 import type { FindingCounts } from '../repositories/revision-rows';
 import type { RevisionRecord } from '../repositories/revisions';
 import type { PersonName } from '../repositories/people';

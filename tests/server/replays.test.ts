@@ -177,14 +177,14 @@ describe('a server that ends', () => {
     try {
       await createTarget(other);
       const { revisionId: own } = await createRevision(other);
-      const { replays } = repositories(other.db);
+      const { replayPoints, replays } = repositories(other.db);
       const about = { engine: '0.9.0', pointsTotal: 3, personId: other.people.tester.id, at: other.clock.now };
       const id = await replays.insert({ revisionId: own, check, ...about });
       await replays.start(id, other.clock.now);
-      await replays.appendPoint(id, { index: 1, verdict: 'fail' } as never);
+      await replayPoints.append(id, { index: 1, verdict: 'fail' } as never);
       await other.services.replayQueue.start();
       while ((await replays.find(id))!.state !== 'done') await sleep(20);
-      const points = await replays.points(id);
+      const points = await replayPoints.list(id);
       expect((await replays.find(id))!.engine).toBe('1.0.0');
       expect(points.map(({ point }) => point.trials)).toEqual([4, 4, 4]);
     } finally {
