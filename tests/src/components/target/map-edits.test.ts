@@ -61,7 +61,7 @@ describe('edits of a map', () => {
 
   it('take a key of a field away when it is set to nothing', () => {
     const bound = map(field('a', 3, 0, { constant: 2 }));
-    expect(first(edits.withField(bound, 0, 0, bindingOf('carrier.track.integral.shift'))).fields[0]).toEqual(
+    expect(first(edits.withField(bound, 0, 0, bindingOf('carrier.track.integral.shift'))).fields[0]).toStrictEqual(
       field('a', 3, 0, { quantity: 'carrier.track.integral.shift', coding: 'signed' }),
     );
   });
