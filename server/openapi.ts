@@ -46,8 +46,15 @@ function parametersOf({ path, query = [], ifMatch }: Route) {
   ];
 }
 
+function requestBodyOf({ body, textBody }: Route) {
+  if (!body && !textBody) return {};
+  const json = body ? { 'application/json': { schema: reference(body) } } : {};
+  const text = Object.fromEntries((textBody ?? []).map((media) => [media, { schema: { type: 'string' } }]));
+  return { requestBody: { required: true, content: { ...json, ...text } } };
+}
+
 function operationOf(route: Route) {
-  const { summary, allowed, body, status = 200, answers = 'application/json' } = route;
+  const { summary, allowed, status = 200, answers = 'application/json' } = route;
   const problem = { description: 'Problem', content: { 'application/problem+json': { schema: reference('problem') } } };
   const success = status === 204 ? { description: 'Done' } : { description: 'Success', content: { [answers]: {} } };
   return {
@@ -55,7 +62,7 @@ function operationOf(route: Route) {
     description: allowed === 'open' ? 'For everyone.' : `For ${allowed.join(', ')}.`,
     security: allowed === 'open' ? [] : [{ bearer: [] }],
     parameters: parametersOf(route),
-    ...(body && { requestBody: { required: true, content: { 'application/json': { schema: reference(body) } } } }),
+    ...requestBodyOf(route),
     responses: { [status]: success, default: problem },
   };
 }

@@ -1,7 +1,7 @@
 import type { DraftBody } from '../../shared/model/draft';
 import type { PlanCreate } from '../../shared/model/plan-create';
 import type { PlanYaml } from '../../shared/model/plan-yaml';
-import { yamlBody } from '../middleware/validate-body';
+import { yamlBody, yamlTypes } from '../middleware/validate-body';
 import { idOf, pageOf, personOf } from '../request';
 import type { PlansService } from '../services/plans';
 import { planFromYaml } from '../services/yaml-plan';
@@ -39,6 +39,7 @@ export function plansRoutes(plans: PlansService): Route[] {
       path: '/plans/from-yaml',
       allowed: engineer,
       summary: 'Check a plan description in YAML and fill in its defaults; nothing is stored',
+      textBody: yamlTypes.slice(0, 1),
       before: yamlBody(),
       handle(req, res) {
         res.json(planFromYaml((req.body as PlanYaml).yaml));

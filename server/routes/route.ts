@@ -7,13 +7,6 @@ export type Allowed = 'open' | readonly Role[];
 
 export const everyone: readonly Role[] = roles;
 
-/** An answer or a body in the words of the API description. */
-export interface Content {
-  media: string;
-  /** Schema of JSON; absent for text. */
-  schema?: SchemaName;
-}
-
 /** One route of the API: all that mounting, describing and testing it needs. */
 export interface Route {
   method: 'get' | 'post' | 'put' | 'patch' | 'delete';
@@ -26,6 +19,8 @@ export interface Route {
   body?: SchemaName;
   /** Key of the body that faults point into. */
   faultsWithin?: string;
+  /** Media types of a body that is text, for the API description. */
+  textBody?: readonly string[];
   /** Handlers between the check of roles and the route's own, where validateBody is not enough. */
   before?: RequestHandler[];
   query?: readonly string[];
