@@ -17,9 +17,11 @@ const againMs = 5000;
  *
  * @param plan replaced as a whole at each edit
  * @param whole false while the plan lacks or misreads something: then nothing is asked
+ * @param first shown as being worked out until the first answer: the design of the last revision
  */
-export function useDesign(plan: Ref<DraftPlan>, whole: Ref<boolean>) {
-  const design = shallowRef<Design | null>(null);
+export function useDesign(plan: Ref<DraftPlan>, whole: Ref<boolean>, first: Design | null = null) {
+  const design = shallowRef(first);
+  const answered = ref(false);
   const faults = shallowRef<readonly Fault[]>([]);
   const unanswered = shallowRef<ApiError | null>(null);
   const late = ref(false);
@@ -44,6 +46,7 @@ export function useDesign(plan: Ref<DraftPlan>, whole: Ref<boolean>) {
   }
 
   function take(answer: Design | ApiError) {
+    answered.value = true;
     const refused = answer instanceof ApiError ? answer : null;
     unanswered.value = refused?.faults.length === 0 ? refused : null;
     faults.value = refused?.faults ?? [];
@@ -63,10 +66,10 @@ export function useDesign(plan: Ref<DraftPlan>, whole: Ref<boolean>) {
 
   const state = computed<Freshness>(() => {
     if (!whole.value || faults.value.length > 0) return design.value ? 'stale' : 'none';
-    if (late.value) return 'working';
+    if (late.value || (design.value && !answered.value)) return 'working';
     return unanswered.value ? 'failed' : design.value ? 'fresh' : 'none';
   });
-  return { design, faults, unanswered, state, ask };
+  return { design, answered, faults, state, ask };
 }
 
 /** Refusals are answers; a call that was overtaken ends like one without faults and is dropped by its caller. */

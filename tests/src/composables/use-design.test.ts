@@ -28,7 +28,10 @@ beforeEach(() => {
       calls.push({
         asked: JSON.parse(init.body as string),
         signal: init.signal!,
-        answer: async (status, body) => (resolve(new Response(JSON.stringify(body), { status })), settle()),
+        answer: async (status, body) => {
+          resolve(new Response(JSON.stringify(body), { status }));
+          await settle();
+        },
       });
     });
   });
