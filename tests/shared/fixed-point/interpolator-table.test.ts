@@ -27,4 +27,12 @@ describe('interpolatorTable', () => {
       expect(tableOf(interpolator)[0]).toEqual([0, 1024, 0, 0]);
     },
   );
+
+  // By hand, times 4: 1/8 … 7/8 become ½, 1, 1½, 2, 2½, 3, 3½.
+  it('takes a half to the even integer', () => {
+    const counter = { widthBits: 32, fractionBits: 3, tableBits: 4 };
+    const clock = { ...gardnerLink.clock, interpolator: 'linear' as const, counter };
+    const { coefficients } = interpolatorTable(clockWords({ ...gardnerLink, clock }));
+    expect(coefficients.map((taps) => taps[2])).toEqual([0, 0, 1, 2, 2, 2, 3, 4]);
+  });
 });
