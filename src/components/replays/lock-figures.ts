@@ -51,12 +51,11 @@ export function shareFigure(input: FigureInput, group: readonly number[]): Figur
     title: `Locked, share of ${numberText(check.trials)} trials, ${percentText(check.limits.confidence)} interval`,
     x: offsetAxis(input),
     y: { label: 'share', domain: [0, 1], ticks: [0, 0.25, 0.5, 0.75, 1], zero: true },
-    series: levels.map((level, place) => ({
+    series: levels.map((level) => ({
       label: level.label,
       tone: level.tone,
       thin: true,
       points: done(level).map((point) => [scale.of(point.offsetHz), point.result.lockProbability.estimate] as const),
-      labelAt: labelPlace(level, place, levels.length, scale),
       quiet: levels.length === 1,
     })),
     bands: requiredBand(input),
@@ -170,14 +169,6 @@ function waitingMarkers(level: Level, scale: OffsetScale): Marker[] {
     hollow: true,
     ...(place === waiting.length - 1 && { label: `${level.label} not run` }),
   }));
-}
-
-/** Labels of several curves part along the axis: where lock is certain all curves lie on each other. */
-function labelPlace(level: Level, place: number, of: number, scale: OffsetScale): number | undefined {
-  const points = done(level);
-  return points.length === 0
-    ? undefined
-    : scale.of(points[Math.floor((points.length * (place + 1)) / (of + 1))]!.offsetHz);
 }
 
 function offsetAxis({ replay, scale, requiredHz }: FigureInput, wanted = 6): Axis {
