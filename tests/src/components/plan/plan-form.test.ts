@@ -138,12 +138,12 @@ describe('ConflictPanel', () => {
     expect(rebase.mock.calls[0]?.[0]).toEqual(withValue(theirs, '/carrier/delay', 2));
   });
 
-  it('does not let go of what is typed while the panel stands', async () => {
+  it('does not let go of what was typed before, nor while the panel stands', async () => {
     const rebase = vi.fn();
     on(ConflictPanel, { divergence, onRebase: rebase }, mine);
     draft.set('/limits/phaseMarginDeg', 50);
     await nextTick();
     await wrapper.get('.b.p').trigger('click');
-    expect(rebase.mock.calls[0]?.[0]).toMatchObject({ limits: { phaseMarginDeg: 50 } });
+    expect(rebase.mock.calls[0]?.[0]).toMatchObject({ limits: { phaseMarginDeg: 50 }, signal: { rollOff: 0.2 } });
   });
 });
