@@ -116,9 +116,17 @@ export const getPlan = (id: number): Promise<PlanSheet> => api.get<PlanSheet>(`/
 
 export const createPlan = (plan: DraftPlan): Promise<{ id: number }> => api.post<{ id: number }>('/plans', { plan });
 
+/** A quantity of an uploaded description that was written with its unit. */
+export interface Understood {
+  pointer: string;
+  written: string;
+  /** Value and unit as they were read. */
+  text: string;
+}
+
 /** Checks an uploaded description and fills in its defaults; nothing is stored. Rejects with a pointer for each fault. */
-export const readYaml = async (yaml: string): Promise<Plan> =>
-  (await api.post<{ plan: Plan }>('/plans/from-yaml', { yaml })).plan;
+export const readYaml = (yaml: string): Promise<{ plan: Plan; understood: Understood[] }> =>
+  api.post('/plans/from-yaml', { yaml });
 
 export const putDraft = (id: number, draft: Draft): Promise<unknown> => api.put(`/plans/${id}/draft`, draft);
 

@@ -1,8 +1,9 @@
 import { ref } from 'vue';
 import { useRouter } from 'vue-router';
-import { readYaml, type DraftPlan } from '../api/plans';
+import { fieldOf } from '../../shared/plan/fields';
+import { readYaml, type DraftPlan, type Understood } from '../api/plans';
 import { examplePlan } from '../components/plans/example-plan';
-import { useAction } from './use-action';
+import { announce, useAction } from './use-action';
 
 /** Where a description waits for the form of a new plan, as JSON: `{ plan }`. */
 export const importKey = 'keepstep.import';
@@ -15,8 +16,10 @@ export function usePlanImport() {
 
   async function take(file: File): Promise<void> {
     fileName.value = file.name;
-    const plan = await run(async () => readYaml(await file.text()));
-    if (plan) await open(plan);
+    const read = await run(async () => readYaml(await file.text()));
+    if (!read) return;
+    await open(read.plan);
+    if (read.understood.length > 0) announce(understoodText(read.understood));
   }
 
   async function open(plan: DraftPlan): Promise<void> {
@@ -28,4 +31,13 @@ export function usePlanImport() {
   const openExample = (target: string) => open(examplePlan(target));
 
   return { busy, error, fileName, take, openExample };
+}
+
+/** “Understood: 1.2 Symbol rate: 1.2 MBd; 4.2 Tolerance, each end: ±20 ppm.” */
+export function understoodText(understood: readonly Understood[]): string {
+  const parts = understood.map(({ pointer, text }) => {
+    const field = fieldOf(pointer);
+    return `${field ? `${field.no} ${field.label}` : pointer}: ${text}`;
+  });
+  return `Understood: ${parts.join('; ')}.`;
 }
