@@ -53,6 +53,13 @@ describe('KsField', () => {
     expect(wrapper.get('.u').text()).toBe('MBd');
   });
 
+  it('does not move to another prefix under the typing hand', async () => {
+    const { type, values } = field({ ...rate, modelValue: 900e3 });
+    await type('1.5 M');
+    await type('1500');
+    expect(values()).toEqual([1.5e6]);
+  });
+
   it('reads a frequency in a field of ppm that knows its carrier', async () => {
     const { wrapper, type } = field({
       number: '4.2',
