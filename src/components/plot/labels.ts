@@ -56,6 +56,12 @@ function boxOf({ text, x, y, anchor }: Label): Box {
   return { x0, x1: x0 + width, y0: y - 10, y1: y + 3 };
 }
 
+/** A mark with its error bar. */
+function boxOfMark({ x, y, low = y, high = y }: Marker, scales: PlotScales): Box {
+  const px = scales.x(x);
+  return { x0: px - 4, x1: px + 4, y0: scales.y(Math.max(y, high)) - 4, y1: scales.y(Math.min(y, low)) + 4 };
+}
+
 const isInside = (box: Box, { left, right, top, bottom }: PlotScales): boolean =>
   box.x0 >= left && box.x1 <= right + 4 && box.y0 >= top - 6 && box.y1 <= bottom;
 
@@ -73,10 +79,7 @@ function clearance(
   const heights = traces.flatMap((trace, at) => (at === own ? [] : trace.slice(from, to + 1)));
   const curves = heights.map((y) => (y === undefined ? enough : Math.max(box.y0 - y, y - box.y1)));
   const labels = placed.map((other) => apart(box, boxOf(other)));
-  const marks = markers.map(({ x, y }) => {
-    const [px, py] = [scales.x(x), scales.y(y)];
-    return apart(box, { x0: px - 4, x1: px + 4, y0: py - 4, y1: py + 4 });
-  });
+  const marks = markers.map((marker) => apart(box, boxOfMark(marker, scales)));
   return Math.min(enough, ...curves, ...labels.map((gap) => 2 * gap), ...marks);
 }
 

@@ -93,6 +93,13 @@ describe('KsGauge', () => {
     expect(width(solid) / width(excess)).toBeCloseTo(3, 9);
   });
 
+  it('shows what is missing below zero', () => {
+    const props = { value: -0.2, limit: 0, bound: 'min', unit: 'bits', state: 'caution', decimals: 1 } as const;
+    const [solid, missing] = mount(KsGauge, { props }).findAll('rect');
+    expect(Number(solid!.attributes('width'))).toBe(0);
+    expect(Number(missing!.attributes('width'))).toBeGreaterThan(20);
+  });
+
   it('repeats it in words', () => {
     expect(hatched(4, 'max').text().replace(/\s+/g, ' ')).toBe('4.00° rms, max 3.00');
   });

@@ -105,6 +105,15 @@ describe('placeLabels', () => {
     expect([moved.x, moved.y]).not.toEqual([free.x, free.y]);
   });
 
+  it('keeps the label of a limit off error bars', () => {
+    const marks = [0, 0.25, 0.5, 0.75, 1].map((x) => ({ x, y: 1, low: 0.86, high: 1, tone: 'track' as const }));
+    const data = plot({ markers: marks, limits: [{ at: 0.9, label: 'limit 0.9' }], y: { label: 'y', domain: [0, 1] } });
+    const scales = plotScales(data, 900, 196);
+    const label = placeLabels(data, scales)[0]!;
+    const [left, right] = [label.x - 6.1 * label.text.length, label.x];
+    expect(marks.filter(({ x }) => scales.x(x) > left - 4 && scales.x(x) < right + 4)).toEqual([]);
+  });
+
   it('says nothing for a quiet curve', () => {
     const data = plot({ series: [{ ...curve('a', (x) => x), quiet: true }] });
     expect(placeLabels(data, plotScales(data, 300, 196))).toEqual([]);
