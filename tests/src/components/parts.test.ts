@@ -98,6 +98,7 @@ describe('KsGauge', () => {
     const [solid, missing] = mount(KsGauge, { props }).findAll('rect');
     expect(Number(solid!.attributes('width'))).toBe(0);
     expect(Number(missing!.attributes('width'))).toBeGreaterThan(20);
+    expect(Number(missing!.attributes('x'))).toBeGreaterThan(0);
   });
 
   it('repeats it in words', () => {
