@@ -29,7 +29,8 @@ export interface Call {
 export async function send(call: Call): Promise<Response> {
   const used = bearerToken();
   let response = await attempt(call);
-  if (response.status === 401 && (await renewToken(used))) response = await attempt(call);
+  // Without a token nobody was signed in: a refused password is an answer, not an expiry.
+  if (response.status === 401 && used !== undefined && (await renewToken(used))) response = await attempt(call);
   if (!response.ok) throw await errorFrom(response);
   return response;
 }

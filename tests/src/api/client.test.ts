@@ -49,6 +49,14 @@ describe('api', () => {
     expect(pathsOf(fetched).filter((path) => path === '/session/refresh')).toHaveLength(1);
   });
 
+  it('takes a refused password as an answer', async () => {
+    keepSession(undefined);
+    const fetched = server('new', ['new']);
+    vi.stubGlobal('fetch', fetched);
+    await expect(api.post('/session', { email: 'a', password: 'b' })).rejects.toMatchObject({ status: 401 });
+    expect(pathsOf(fetched)).toEqual(['/session']);
+  });
+
   it('ends the session when the cookie is refused', async () => {
     vi.stubGlobal('fetch', server('other', []));
     await expect(api.get('/plans')).rejects.toMatchObject({ status: 401 });
