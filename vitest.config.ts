@@ -8,7 +8,13 @@ const at = (path: string): string => fileURLToPath(new URL(path, import.meta.url
 export default defineConfig({
   test: {
     projects: [
-      { test: { name: 'shared', environment: 'node', include: ['tests/shared/**/*.test.ts', 'tests/scripts/**/*.test.ts'] } },
+      {
+        test: {
+          name: 'shared',
+          environment: 'node',
+          include: ['tests/shared/**/*.test.ts', 'tests/scripts/**/*.test.ts'],
+        },
+      },
       {
         plugins: [vue({ template: { transformAssetUrls } }), quasar({ autoImportComponentCase: 'kebab' })],
         // Under Vitest `quasar` would resolve to its server bundle.
