@@ -30,7 +30,7 @@ function exactAgainstWanted(view: LoopView): Finding[] {
       reason: `${stageName(worst.at)} asks for BnT ${say(wanted)} and has ${say(exact, 4)} with its delay. Jitter and acquisition follow what it has.`,
       ...remedyUnless(severity, () => takeExact(view, worst.at)),
       fields: [pointerOf(view, 'method'), bandwidthPointer(worst.at), pointerOf(view, 'delay')],
-      source: 'exact bandwidth of 3.1; the limit is common practice',
+      source: 'noise bandwidth with the delay, exact; the limit is common practice',
     }),
   ];
 }

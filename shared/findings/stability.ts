@@ -72,7 +72,7 @@ function phaseMargin(view: LoopView): Finding[] {
         narrowerLoop(worst.at, (loop) => (phaseMarginDeg(gainCrossings(loop), 0) ?? 0) >= limit),
       ),
       fields: [pointerOf(view, 'delay'), bandwidthPointer(worst.at), '/limits/phaseMarginDeg'],
-      source: 'follows from 3.1, exact',
+      source: 'open loop with its delay, exact',
     }),
   ];
 }
