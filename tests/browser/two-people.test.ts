@@ -1,6 +1,3 @@
-import { writeFile } from 'node:fs/promises';
-import { tmpdir } from 'node:os';
-import { join } from 'node:path';
 import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { openBrowser } from '../support/browser';
@@ -116,9 +113,8 @@ carrier:
 `;
 
 async function chooseFile(page: Page, name: string, text: string): Promise<void> {
-  const path = join(tmpdir(), `keepstep-${process.pid}-${name}`);
-  await writeFile(path, text);
-  await page.locator('input[type=file]').first().setInputFiles(path);
+  const file = { name, mimeType: 'application/yaml', buffer: Buffer.from(text) };
+  await page.locator('input[type=file]').first().setInputFiles(file);
 }
 
 async function save(page: Page, revision: string): Promise<void> {

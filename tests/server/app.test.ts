@@ -1,5 +1,4 @@
-import { mkdirSync, mkdtempSync, writeFileSync } from 'node:fs';
-import { tmpdir } from 'node:os';
+import { mkdirSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { Ajv2020 } from 'ajv/dist/2020';
 import supertest from 'supertest';
@@ -7,12 +6,13 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { apiRoutes } from '../../server/routes/index';
 import { startTestServer, type TestServer } from '../support/test-server';
 import { createTarget, plan } from '../support/receivers';
+import { temporaryFolder } from '../support/temporary-folder';
 
 let server: TestServer;
 const lines: string[] = [];
 
 function builtApplication(): string {
-  const folder = mkdtempSync(join(tmpdir(), 'keepstep-web-'));
+  const folder = temporaryFolder('web');
   mkdirSync(join(folder, 'assets'));
   writeFileSync(join(folder, 'index.html'), '<!doctype html><title>Keepstep</title>');
   writeFileSync(join(folder, 'assets', 'index-abc123.js'), 'export {};');

@@ -1,14 +1,12 @@
 import { spawn, type ChildProcess } from 'node:child_process';
 import { once } from 'node:events';
-import { mkdtempSync } from 'node:fs';
 import { createServer, type Server } from 'node:net';
-import { tmpdir } from 'node:os';
-import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { createTestDatabase, type TestDatabase } from '../support/create-database';
 import { freePort } from '../support/running-server';
+import { temporaryFolder } from '../support/temporary-folder';
 
 const source = fileURLToPath(new URL('../../server/index.ts', import.meta.url));
 const password = 'a password of this test';
@@ -22,7 +20,7 @@ beforeAll(async () => {
   env = {
     DATABASE_URL: database.appUrl,
     DATABASE_OWNER_URL: database.ownerUrl,
-    KEEPSTEP_DATA_DIR: mkdtempSync(join(tmpdir(), 'keepstep-start-')),
+    KEEPSTEP_DATA_DIR: temporaryFolder('start'),
     KEEPSTEP_EMBEDDED: '1',
     KEEPSTEP_DEMO_PASSWORD: password,
     LOG_LEVEL: 'warn',
