@@ -6,7 +6,7 @@ import { phaseMarginDeg } from './margins';
 import type { GainCrossing } from './margins';
 import type { StepResponse } from './step-response';
 
-const stepPoints = 160;
+const stepPoints = 220;
 const responsePoints = 140;
 /** The longest delay that a plan can ask for, updates. */
 const longestDelay = 64;
@@ -67,9 +67,9 @@ function halfPowerFrequency(loop: LinearLoop, omega: Float64Array, h: Float64Arr
   return bisect((value) => closedLoopPower(loop, value) - 0.5, from, omega[below] as number) / (2 * Math.PI);
 }
 
-/** The phase step over one and a half settling times. */
-export function stepCurve({ phase, settlingUpdates }: StepResponse): PhaseStep {
-  const last = Math.min(phase.length - 1, Math.max(Math.ceil(1.5 * settlingUpdates), 8));
+/** The phase step over the whole simulated time, eight time constants of the slowest pole: it ends within a few parts in a thousand of 1. */
+export function stepCurve({ phase }: Pick<StepResponse, 'phase'>): PhaseStep {
+  const last = phase.length - 1;
   const count = Math.min(stepPoints, last + 1);
   const updates = Array.from({ length: count }, (_, i) => Math.round((i * last) / (count - 1)));
   return { updates, phase: updates.map((k) => phase[k] as number) };

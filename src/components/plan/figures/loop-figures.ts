@@ -1,4 +1,4 @@
-import type { Design } from '../../../../shared/model/design';
+import type { Design, LoopDesign } from '../../../../shared/model/design';
 import { settled } from '../../../../shared/plan/changes';
 import type { Figure } from './figure';
 import { jitterFigure } from './jitter-figure';
@@ -32,5 +32,14 @@ export function loopFigures(design: Design, kind: LoopKind): NumberedFigure[] {
     jitterFigure(loop, limits),
     marginFigure(loop, read(`/${kind}/delay`), read('/limits/phaseMarginDeg')),
   ];
-  return figures.flatMap((figure, index) => (figure ? [{ ...figure, figure: index + 1 }] : []));
+  return figures.flatMap((figure, index) => (figure && hasCurve(figure) ? [{ ...figure, figure: index + 1 }] : []));
 }
+
+/** An unstable loop has no response to draw. */
+const hasCurve = ({ series }: Figure): boolean => series.some(({ points }) => points.length > 1);
+
+/** What to read where figures are left out because no stage of the loop is stable; undefined while one is. */
+export const missingFigures = ({ stages }: LoopDesign): string | undefined =>
+  stages.some(({ stable }) => stable)
+    ? undefined
+    : 'An unstable loop has no response and no jitter: Fig. 1, 2 and 5 are left out.';

@@ -29,8 +29,9 @@ function reach(stages: readonly StageDesign[], delay: number, limitDeg: number):
   return Math.min(most, Math.max(wanted, 1.5 * delay, 8));
 }
 
+/** A margin below 0 lies outside the plot: the caption says it. */
 const here = ({ margins }: StageDesign, delay: number, tone: Marker['tone']): Marker[] =>
-  margins.phaseDeg === null ? [] : [{ x: delay, y: margins.phaseDeg, tone, hollow: true }];
+  margins.phaseDeg === null || margins.phaseDeg < 0 ? [] : [{ x: delay, y: margins.phaseDeg, tone, hollow: true }];
 
 /** The largest delay of the curve at which the margin is still held; undefined when none is, or all are. */
 export function keepsUpTo({ marginAgainstDelay }: Pick<StageDesign, 'marginAgainstDelay'>, limitDeg: number) {

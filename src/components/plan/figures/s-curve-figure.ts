@@ -41,7 +41,10 @@ function curves({ curve, variance, gain, gainWithoutNoise }: Detector, scale: nu
     points: pointsOf(x, curve.noiseless),
   };
   const label = alike ? 'mean error' : `${numberText(esN0Db)} dB`;
-  return [...(alike ? [] : [noiseless]), { label, tone: 'track', points: noisy, ...(variance !== null && { area }) }];
+  // Beside its trough the curve is alone: the slope and the curve without noise lie elsewhere.
+  const labelAt = -(curve.x.at(-1) ?? 0) * scale * 0.62;
+  const noisyCurve: Series = { label, tone: 'track', points: noisy, labelAt, ...(variance !== null && { area }) };
+  return [...(alike ? [] : [noiseless]), noisyCurve];
 }
 
 /** The tangent at lock, over the middle of the period. */

@@ -1,6 +1,6 @@
 import type { LoopDesign, StageDesign } from '../../../../shared/model/design';
 import { numberText } from '../../../../shared/quantities/format';
-import { capital, eachStage, pointsOf, toneOf, type Figure } from './figure';
+import { capital, eachStage, pointsOf, toneOf, type Figure, type Point } from './figure';
 import type { Marker } from '../../plot/plot-model';
 
 /** Fig. 1: the answer of the NCO phase (of the strobe, in a clock loop) to a phase step. */
@@ -14,12 +14,20 @@ export function stepFigure({ stages }: LoopDesign): Figure {
     series: stages.map((stage, index) => ({
       label: stage.name,
       tone: toneOf(index, stages.length),
-      points: pointsOf(stage.phaseStep.updates, stage.phaseStep.phase).filter(([at]) => at <= last),
+      points: curveUpTo(stage, last),
       quiet: stage.settlingUpdates !== null,
     })),
     markers: stages.flatMap((stage, index) => settled(stage, toneOf(index, stages.length))),
     caption: captionOf(stages),
   };
+}
+
+/** The curve as far as the plot goes; one that was over before goes on at 1, from which it differs by a few parts in a thousand at most. */
+function curveUpTo({ phaseStep, settlingUpdates }: StageDesign, last: number): Point[] {
+  const points = pointsOf(phaseStep.updates, phaseStep.phase);
+  const end = points.at(-1)?.[0] ?? last;
+  const goesOn: Point[] = settlingUpdates !== null && end < last ? [[last, 1]] : [];
+  return [...points.filter(([at]) => at <= last), ...goesOn];
 }
 
 /** Where the plot may end: a little past settling, or where the curve ends when it never settles. */

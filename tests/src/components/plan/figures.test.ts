@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { loopFigures } from '../../../../src/components/plan/figures/loop-figures';
+import { loopFigures, missingFigures } from '../../../../src/components/plan/figures/loop-figures';
 import { keepsUpTo } from '../../../../src/components/plan/figures/margin-figure';
 import { crossingHz } from '../../../../src/components/plan/figures/response-figure';
 import { examplePlan } from '../../../../src/components/plans/example-plan';
@@ -52,6 +52,24 @@ describe('loopFigures', () => {
     const captions = loopFigures(far, 'carrier').map(({ caption }) => caption);
     expect(captions[0]).toContain('Acquire never settles');
     expect(captions[2]).toContain('the loop is unstable');
+  });
+
+  it('draws each step to the end of the plot', () => {
+    const [acquire, track] = figure(1).series.map(({ points }) => points.at(-1)!);
+    expect(acquire![0]).toBeGreaterThan(600);
+    expect(acquire![1]).toBeCloseTo(1, 2);
+    expect(track![1]).toBeCloseTo(1, 1);
+  });
+
+  // With these gains 38 and 97 updates of delay are the most (poles on the unit circle, by bisection outside the project).
+  it('leaves out what an unstable loop has not, and says so', () => {
+    const plan = examplePlan('corvid-c2');
+    const unstable = design({ ...plan, carrier: { ...plan.carrier!, delay: 64, stages: [plan.carrier!.stages[0]!] } });
+    const figures = loopFigures(unstable, 'carrier');
+    expect(figures.map((each) => each.figure)).toEqual([3, 4, 6]);
+    expect(figures.at(-1)!.markers).toEqual([]);
+    expect(missingFigures(unstable.carrier!)).toContain('Fig. 1, 2 and 5 are left out');
+    expect(missingFigures(worked.carrier!)).toBeUndefined();
   });
 });
 
