@@ -1,3 +1,4 @@
+import { readFile } from 'node:fs/promises';
 import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { openBrowser } from '../support/browser';
@@ -70,6 +71,17 @@ describe('drafts, conflicts and other beginnings of a plan', () => {
     expect(await hers.getByRole('radio', { name: 'exact' }).first().isChecked()).toBe(true);
     await hers.getByRole('button', { name: 'Take it back' }).click();
     expect(await hers.getByRole('radio', { name: 'nominal' }).first().isChecked()).toBe(true);
+  });
+
+  it('hands out the files of an earlier revision as they were', async () => {
+    await hers.getByLabel('Files of an earlier revision').selectOption('r1');
+    await hers.getByText('Files of r1.').waitFor();
+    const [download] = await Promise.all([
+      hers.waitForEvent('download'),
+      hers.getByRole('table', { name: 'Files of r1' }).getByRole('button', { name: 'Download config.h' }).click(),
+    ]);
+    expect(await readFile(await download.path(), 'utf8')).toMatch(/_REVISION\s+UINT32_C\(1\)/);
+    await expectSound(hers, 'the files of an earlier revision');
   });
 
   it('begins a plan from a copy and from a YAML file, and says what in a file cannot be read', async () => {
