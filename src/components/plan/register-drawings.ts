@@ -1,8 +1,9 @@
 import type { Design } from '../../../shared/model/design';
 import type { RegisterMap } from '../../../shared/model/register-map';
-import { registerValues, type FieldValue, type RegisterValue } from '../../../shared/registers/binding';
+import { registerValues, type RegisterValue } from '../../../shared/registers/binding';
 import { hexText, wordBitsOf } from '../../../shared/registers/map';
 import { quantitiesOf } from '../../../shared/registers/quantities';
+import { fieldValueText } from '../target/field-value-text';
 
 /** A register as KsRegister draws it. */
 export interface RegisterDrawing {
@@ -62,16 +63,8 @@ function drawing(now: RegisterValue, old: RegisterValue | undefined, base: strin
     was: old && old.value !== value ? hexText(old.value, width) : undefined,
     width,
     fields: fields.map((field, index) => ({
-      ...{ name: field.field.name, high: field.field.high, low: field.field.low, value: held(field) },
+      ...{ name: field.field.name, high: field.field.high, low: field.field.low, value: fieldValueText(field) },
       selected: old !== undefined && old.fields[index]?.raw !== field.raw,
     })),
   };
-}
-
-/** Long words in hexadecimal, short ones in decimal, a choice by its name. */
-function held({ field, value, raw, quantity, fault }: FieldValue): string {
-  if (fault) return 'does not fit';
-  if (quantity?.choice) return quantity.choice;
-  const width = field.high - field.low + 1;
-  return width > 16 ? hexText(raw, width) : String(value).replace('-', '\u2212');
 }
