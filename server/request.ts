@@ -18,10 +18,13 @@ export function idOf(req: Request, noun: string, name = 'id'): number {
   return Number(text);
 }
 
-/** A name of the path that rows are looked up by. NUL and other control characters are in none of them. */
+/** Names that rows are looked up by are ASCII; the database cannot compare others with them. */
+const namePattern = /^[\x20-\x7e]{1,100}$/;
+
+/** A name of the path that rows are looked up by. One that no row can have is answered like one that no row has. */
 export function nameOf(req: Request, noun: string, name: string): string {
   const text = paramOf(req, name);
-  if (!/^[\x20-\x7e]{1,100}$/.test(text)) throw notFound(noun);
+  if (!namePattern.test(text)) throw notFound(noun);
   return text;
 }
 
@@ -50,6 +53,13 @@ export function queryOf(req: Request, name: string): string | undefined {
   if (value === undefined || value === '') return undefined;
   if (typeof value === 'string') return value;
   throw invalidAt(`/${name}`, 'must be given once');
+}
+
+/** A name of the query that rows are looked up by. */
+export function nameQueryOf(req: Request, name: string): string | undefined {
+  const text = queryOf(req, name);
+  if (text === undefined || namePattern.test(text)) return text;
+  throw invalidAt(`/${name}`, 'must be a name of printable ASCII characters');
 }
 
 /** A whole number of the query, 0 or more. */

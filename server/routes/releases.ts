@@ -2,7 +2,7 @@ import type { Request, Response } from 'express';
 import type { ReleaseCreate } from '../../shared/model/release-create';
 import type { ReleaseEntry } from '../../shared/model/release-entry';
 import type { ReleaseFreeze } from '../../shared/model/release-freeze';
-import { idOf, nameOf, pageOf, personOf, queryOf, versionOf } from '../request';
+import { idOf, nameOf, nameQueryOf, pageOf, personOf, queryOf, versionOf } from '../request';
 import type { StoredFile } from '../services/files';
 import type { DraftChange } from '../services/release-drafts';
 import type { Release, ReleasesService } from '../services/releases';
@@ -39,7 +39,7 @@ const listAndCreate = (releases: ReleasesService): Route[] => [
     summary: 'Releases, newest first, of one target when it is given',
     query: ['target', ...paging],
     async handle(req, res) {
-      res.json(await releases.list(queryOf(req, 'target'), pageOf(req)));
+      res.json(await releases.list(nameQueryOf(req, 'target'), pageOf(req)));
     },
   },
   {
