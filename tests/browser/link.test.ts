@@ -47,6 +47,30 @@ describe.each([
     await page.getByRole('link', { name: 'Transponder 17, QPSK 27.5', exact: true }).waitFor();
   });
 
+  it('renews an access token that has run out without asking anybody', async () => {
+    const renewed = page.waitForResponse((answer) => answer.url().endsWith('/session/refresh') && answer.ok());
+    let refused = 0;
+    await page.route(/\/api\/v1\/targets/, async (route) => {
+      refused += 1;
+      const problem = JSON.stringify({
+        type: '/problems/unauthenticated',
+        title: 'Sign in again.',
+        status: 401,
+        faults: [],
+      });
+      if (refused > 1) await route.continue();
+      else await route.fulfill({ status: 401, contentType: 'application/problem+json', body: problem });
+    });
+    await page.getByRole('link', { name: 'Targets', exact: true }).click();
+    await renewed;
+    await page.getByRole('link', { name: 'Corvid C2' }).first().waitFor();
+    await expectSound(page, 'targets');
+    await page.getByRole('link', { name: 'Corvid C2' }).first().click();
+    await page.getByRole('heading', { name: 'Registers' }).waitFor();
+    await expectSound(page, 'a target');
+    await page.unroute(/\/api\/v1\/targets/);
+  });
+
   it('takes the description, with units as people type them', async () => {
     await page.goto(`${server.address}/plans/new`);
     await page.getByLabel('Name', { exact: true }).fill(name);
