@@ -73,7 +73,7 @@ function error(view: LoopView, check: ErrorCheck): Finding[] {
 }
 
 /** The fewest mantissa bits with which every stage keeps both limits; for other gain forms, the multiplier. */
-function finerWords(view: LoopView): Remedy | null {
+export function finerWords(view: LoopView): Remedy | null {
   const { gainForm, mantissaBits } = view.loop.arithmetic;
   if (gainForm !== 'multiplier') {
     return setTo(

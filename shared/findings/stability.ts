@@ -1,10 +1,11 @@
 import type { Finding } from '../model/design';
 import { gainCrossings, phaseMarginDeg, stabilityLimits } from '../loop/margins';
 import { finding, passed, remedyUnless, say } from './finding';
-import type { Severity } from './finding';
+import type { Remedy, Severity } from './finding';
 import { bandwidthPointer, numberOf, pointerOf, stageAt, stageName, stageViews, worstStage } from './loop-view';
 import type { LoopView, StageView } from './loop-view';
 import { narrowerLoop } from './narrower';
+import { finerWords } from './quantisation';
 
 /** Spare gain below which a loop is called close to its limit, dB. */
 const leastGainMarginDb = 6;
@@ -68,13 +69,18 @@ function phaseMargin(view: LoopView): Finding[] {
       sense: 'min',
       unit: '°',
       reason: `${stageName(worst.at)} keeps ${say(value)}° with ${view.loop.delay} updates of delay (${numberOf(view, 'delay')}). A small margin rings and amplifies noise near the loop’s own frequency.`,
-      ...remedyUnless(severity, () =>
-        narrowerLoop(worst.at, (loop) => (phaseMarginDeg(gainCrossings(loop), 0) ?? 0) >= limit),
-      ),
+      ...remedyUnless(severity, () => widerMargin(view, worst.at, limit)),
       fields: [pointerOf(view, 'delay'), bandwidthPointer(worst.at), '/limits/phaseMarginDeg'],
       source: 'open loop with its delay, exact',
     }),
   ];
+}
+
+/** Finer words where only their rounding costs the margin; a narrower loop where the gains themselves lack it. */
+function widerMargin(view: LoopView, at: StageView, limit: number): Remedy | null {
+  const ofGains = at.result.margins.phaseDeg;
+  if (ofGains !== null && ofGains >= limit) return finerWords(view);
+  return narrowerLoop(at, (loop) => (phaseMarginDeg(gainCrossings(loop), 0) ?? 0) >= limit);
 }
 
 /** The gain rises by the error of the gain control, once more for detectors that go with the square of the amplitude. */

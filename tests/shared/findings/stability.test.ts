@@ -42,6 +42,17 @@ describe('stability.phase-margin', () => {
     expect(afterRemedy(finding, parts).severity).toBe('pass');
   });
 
+  // Derived: BnT 0.002 has 65.3° of margin, but powers of two take ζ from 0.707 to about 0.5, where it is near 52°.
+  it('types finer words where only the words lack the margin', () => {
+    const parts = {
+      carrier: { delay: 0, stages: stages(0.002), arithmetic: { gainForm: 'shift' } },
+      limits: { phaseMarginDeg: 60 },
+    } as const;
+    const finding = carrierFinding('stability.phase-margin', parts);
+    expect(finding).toMatchObject({ severity: 'fail', change: { pointer: '/carrier/arithmetic/gainForm' } });
+    expect(afterRemedy(finding, parts).severity).toBe('pass');
+  });
+
   it('says nothing of a loop that is unstable', () => {
     expect(
       findingsAbout('stability.phase-margin', { clock: undefined, carrier: { delay: 60, stages: stages(0.05) } }),
