@@ -32,7 +32,7 @@ export class AppError extends Error {
   constructor(
     readonly kind: Kind,
     title: string,
-    { faults = [], current, cause }: { faults?: readonly Fault[]; current?: object; cause?: unknown } = {},
+    { faults = [], current, cause }: { faults?: readonly Fault[]; current?: object | undefined; cause?: unknown } = {},
   ) {
     super(title, { cause });
     this.faults = faults;

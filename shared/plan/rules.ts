@@ -43,7 +43,7 @@ export function ruleAt(pointer: string): Rule | undefined {
 
 /** The defaults of an object of the schema, nested ones included: what an empty form shows. */
 export function defaultsAt(pointer: string): Record<string, unknown> {
-  const node = ruleAt(pointer) as SchemaNode | undefined;
+  const node: SchemaNode | undefined = ruleAt(pointer);
   const entries = Object.entries(node?.properties ?? {}).map(([key, child]): [string, unknown] => [
     key,
     resolved(child).properties ? defaultsAt(`${pointer}/${key}`) : resolved(child).default,

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { corvidC1Target } from '../../../seeds/corvid-c1-map';
 import { configHeader } from '../../../shared/files/c-header';
 import type { TargetSnapshot } from '../../../shared/files/file-input';
+import type { CarrierLoop } from '../../../shared/model/plan';
 import type { Field, RegisterMap } from '../../../shared/model/register-map';
 import { complaints, including, languages, printed } from './compile';
 import { carrierWords, design, digest, input, plan, target } from './fixture';
@@ -29,7 +30,7 @@ const wideWords = {
 const variants = {
   'both loops on the demo board': input(),
   'a release': input({ release: '2.4.0-rc.1' }),
-  'a carrier loop only': input({ design: { carrier: design.carrier } }),
+  'a carrier loop only': input({ design: { carrier: design.carrier! } }),
   'a smaller board': input({ target: { ...corvidC1Target, mapNumber: 1 } }),
   'an empty map': withMap({ registers: [] }),
   'a map of status registers': withMap({
@@ -162,7 +163,7 @@ describe('configHeader', () => {
   it('is the same to the byte whatever the order of the keys', () => {
     const shuffled = {
       ...plan,
-      carrier: Object.fromEntries(Object.entries(plan.carrier!).reverse()) as typeof plan.carrier,
+      carrier: Object.fromEntries(Object.entries(plan.carrier!).reverse()) as CarrierLoop,
     };
     expect(configHeader(input({ plan: shuffled }))).toBe(configHeader(input()));
   });

@@ -46,7 +46,7 @@ describe('quantitiesOf', () => {
   });
 
   it('reads only the loops that the plan has', () => {
-    const paths = quantitiesOf({ plan, design: { clock: design.clock } }).map(({ path }) => path);
+    const paths = quantitiesOf({ plan, design: { clock: design.clock! } }).map(({ path }) => path);
     expect(paths.every((path) => path.startsWith('clock.'))).toBe(true);
   });
 
