@@ -1,7 +1,7 @@
 import type { RequestHandler } from 'express';
 import { forbidden, unauthenticated } from '../errors';
 import { personOf } from '../request';
-import type { Allowed } from '../routes/route';
+import type { Allowed } from '../roles';
 
 /** Lets through whom a route allows; everybody else gets 401 when signed out and 403 when signed in. */
 export const requireRole =

@@ -1,6 +1,7 @@
 import type { DesignRequest } from '../../shared/model/design-request';
 import type { DesignsService } from '../services/designs';
-import { everyone, type Route } from './route';
+import { everyone } from '../roles';
+import { type Route } from './route';
 
 export function designsRoutes(designs: DesignsService): Route[] {
   return [

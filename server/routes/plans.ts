@@ -5,7 +5,8 @@ import { yamlBody, yamlTypes } from '../middleware/validate-body';
 import { idOf, pageOf, personOf } from '../request';
 import type { PlansService } from '../services/plans';
 import { planFromYaml } from '../services/yaml-plan';
-import { everyone, paging, tagged, type Route } from './route';
+import { everyone } from '../roles';
+import { paging, tagged, type Route } from './route';
 
 const engineer = ['engineer'] as const;
 

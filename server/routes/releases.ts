@@ -6,7 +6,8 @@ import { idOf, nameOf, nameQueryOf, pageOf, personOf, queryOf, versionOf } from 
 import type { StoredFile } from '../services/files';
 import type { DraftChange } from '../services/release-drafts';
 import type { Release, ReleasesService } from '../services/releases';
-import { everyone, paging, tagged, type Route } from './route';
+import { everyone } from '../roles';
+import { paging, tagged, type Route } from './route';
 import { sendTextFile } from './text-file';
 
 const manager = ['release'] as const;

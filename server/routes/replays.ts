@@ -4,7 +4,8 @@ import { countOf, idOf, pageOf, personOf } from '../request';
 import type { ReplayStreamsService } from '../services/replay-stream';
 import type { ReplaysService } from '../services/replays';
 import { eventStream, lastEventIdOf } from './event-stream';
-import { everyone, paging, type Route } from './route';
+import { everyone } from '../roles';
+import { paging, type Route } from './route';
 
 const testers = ['engineer', 'tester'] as const;
 

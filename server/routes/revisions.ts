@@ -1,7 +1,8 @@
 import type { RevisionCreate } from '../../shared/model/revision-create';
 import { idOf, nameOf, pageOf, personOf, queryOf, versionOf } from '../request';
 import type { RevisionsService, Save } from '../services/revisions';
-import { everyone, paging, type Route } from './route';
+import { everyone } from '../roles';
+import { paging, type Route } from './route';
 import { sendTextFile } from './text-file';
 
 export function revisionsRoutes(revisions: RevisionsService): Route[] {

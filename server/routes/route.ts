@@ -1,11 +1,6 @@
 import type { Request, RequestHandler, Response } from 'express';
-import { roles, type Role } from '../roles';
+import type { Allowed } from '../roles';
 import type { SchemaName } from '../schemas';
-
-/** Who may call a route: anyone, signed in or not, or the people of these roles. */
-export type Allowed = 'open' | readonly Role[];
-
-export const everyone: readonly Role[] = roles;
 
 /** One route of the API: all that mounting, describing and testing it needs. */
 export interface Route {

@@ -1,6 +1,7 @@
 import { queryOf } from '../request';
 import type { SearchService } from '../services/search';
-import { everyone, type Route } from './route';
+import { everyone } from '../roles';
+import { type Route } from './route';
 
 export function searchRoutes(search: SearchService): Route[] {
   return [

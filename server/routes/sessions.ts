@@ -7,7 +7,8 @@ import { signInLimit } from '../middleware/sign-in-limit';
 import { idOf, personOf } from '../request';
 import type { PasswordsService } from '../services/passwords';
 import { sessionLife, type SessionsService, type Tokens } from '../services/sessions';
-import { everyone, type Route } from './route';
+import { everyone } from '../roles';
+import { type Route } from './route';
 
 const cookieName = 'keepstep_refresh';
 

@@ -1,7 +1,8 @@
 import type { TargetBody } from '../../shared/model/target';
 import { nameOf, pageOf, personOf, versionOf } from '../request';
 import type { TargetsService } from '../services/targets';
-import { everyone, paging, tagged, type Route } from './route';
+import { everyone } from '../roles';
+import { paging, tagged, type Route } from './route';
 
 const engineer = ['engineer'] as const;
 
