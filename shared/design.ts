@@ -1,7 +1,7 @@
 import type { Design, LoopDesign } from './model/design';
 import type { Plan } from './model/plan';
-import { carrierLoop } from './loop/carrier-loop';
-import { clockLoop } from './loop/clock-loop';
+import { carrierLoop } from './design/carrier-loop';
+import { clockLoop } from './design/clock-loop';
 import { engineVersion } from './engine';
 import { findingsOf } from './findings';
 import { completePlan } from './plan/complete';

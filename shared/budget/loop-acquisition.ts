@@ -2,7 +2,8 @@ import type { Acquisition, StageDesign } from '../model/design';
 import { sCurveShape } from '../detectors/detector';
 import type { DetectorModel } from '../detectors/detector';
 import { rotationalSymmetry } from '../detectors/modulations';
-import type { CompletePlan, Environment } from '../plan/complete';
+import type { CompletePlan } from '../plan/complete';
+import { askedErrorPpm, askedOffsetHz } from '../plan/required-offset';
 import { falseLockSpacingHz, lockInOmega, pullInSeconds, unambiguousOffsetHz } from './acquisition';
 import type { LoopDynamics } from './acquisition';
 
@@ -13,15 +14,6 @@ export interface AcquisitionInput {
   first: StageDesign;
   /** Largest offset that the integrator holds, Hz (carrier) or ppm (clock). */
   held: number;
-}
-
-/**
- * Largest carrier offset that both ends' tolerance and the Doppler shift make together, ± Hz; null when a tolerance
- * is given in ppm of a carrier that is not.
- */
-export function askedOffsetHz({ carrierFrequencyHz, carrierTolerancePpm, dopplerHz }: Environment): number | null {
-  if (carrierTolerancePpm === 0) return dopplerHz;
-  return carrierFrequencyHz === undefined ? null : 2 * carrierTolerancePpm * 1e-6 * carrierFrequencyHz + dopplerHz;
 }
 
 /** Range and ambiguity of a carrier loop. Lock-in and pull-in are estimates, and are there for order 2 only. */
@@ -46,7 +38,7 @@ export function carrierAcquisition({ plan, model, first, held }: AcquisitionInpu
 /** Range of a clock loop: a clock error slips one symbol after another, an S-curve of period 1 symbol. */
 export function clockAcquisition({ plan, model, first, held }: AcquisitionInput): Acquisition {
   const symbolRateBd = plan.signal.symbolRateBd;
-  const offsetPpm = 2 * plan.environment.clockTolerancePpm;
+  const offsetPpm = askedErrorPpm(plan.environment);
   const { pullInSymbols } = estimates(first, model, { offsetOmega: offsetPpm * 1e-6 * symbolRateBd, symbolRateBd });
   return {
     unambiguousHz: null,

@@ -8,7 +8,7 @@ import { configQuantity, configRegister } from './config-registers';
 import { wrapText } from './c-text';
 import { care, type FileInput, type TargetSnapshot } from './file-input';
 import { provenance } from './header-head';
-import { stableOrder } from './stable-order';
+import { stableOrder } from '../stable-order';
 
 const targetOf = ({ registerMap, mapNumber, slug, name, loopClockHz, cPrefix, baseAddress }: TargetSnapshot) => ({
   slug,

@@ -1,3 +1,5 @@
+import type { Environment } from './complete';
+
 /** The part of a plan that says how far the carrier may be off. */
 export interface CarrierEnvironment {
   /** Hz; absent where the tolerance is not given in ppm of a carrier. */
@@ -21,3 +23,13 @@ export function requiredOffsetHz(environment: CarrierEnvironment): number {
   const { carrierFrequencyHz = 0, carrierTolerancePpm = 0, dopplerHz = 0 } = environment;
   return (2 * carrierTolerancePpm * carrierFrequencyHz) / 1e6 + dopplerHz;
 }
+
+/** The same of a completed plan; null when a tolerance is given in ppm of a carrier that is not. */
+export function askedOffsetHz({ carrierFrequencyHz, ...environment }: Environment): number | null {
+  if (carrierFrequencyHz === undefined) return environment.carrierTolerancePpm === 0 ? environment.dopplerHz : null;
+  return requiredOffsetHz({ carrierFrequencyHz, ...environment });
+}
+
+/** Largest clock error that both ends make together, ± ppm. */
+export const askedErrorPpm = ({ clockTolerancePpm }: Pick<Environment, 'clockTolerancePpm'>): number =>
+  2 * clockTolerancePpm;

@@ -1,4 +1,4 @@
-import { stableOrder } from '../files/stable-order';
+import { stableOrder } from '../stable-order';
 import type { Register, RegisterMap } from '../model/register-map';
 
 export interface RegisterChange {

@@ -1,5 +1,5 @@
 import { computed, shallowRef, watch } from 'vue';
-import { stableOrder } from '../../shared/files/stable-order';
+import { stableOrder } from '../../shared/stable-order';
 import type { RegisterMap } from '../../shared/model/register-map';
 import type { TargetBody } from '../../shared/model/target';
 import { changedRegisters, rebaseMap } from '../../shared/registers/map-changes';

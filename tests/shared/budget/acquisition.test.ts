@@ -5,7 +5,6 @@ import {
   pullInSeconds,
   unambiguousOffsetHz,
 } from '../../../shared/budget/acquisition';
-import { askedOffsetHz } from '../../../shared/budget/loop-acquisition';
 import { carrierDetector } from '../../../shared/detectors/carrier';
 import { sCurveShape } from '../../../shared/detectors/detector';
 
@@ -53,19 +52,5 @@ describe('lock-in and pull-in', () => {
 
   it('takes no time within the lock-in range', () => {
     expect(pullInSeconds(dynamics, sine(1), 141)).toBe(0);
-  });
-});
-
-describe('askedOffsetHz', () => {
-  const environment = { carrierTolerancePpm: 25, dopplerHz: 100, dopplerRateHzPerS: 0, clockTolerancePpm: 0 };
-
-  // Two ends add: ±25 ppm each of 1.55 GHz is ±77.5 kHz.
-  it('adds both ends and the Doppler shift', () => {
-    expect(askedOffsetHz({ ...environment, carrierFrequencyHz: 1.55e9 })).toBeCloseTo(77_600, 6);
-  });
-
-  it('is not known when the carrier is not', () => {
-    expect(askedOffsetHz(environment)).toBeNull();
-    expect(askedOffsetHz({ ...environment, carrierTolerancePpm: 0 })).toBe(100);
   });
 });

@@ -1,7 +1,26 @@
 import type { HeadroomNode } from '../model/design';
 import type { ClockWords } from '../model/words';
-import { toNumber } from '../fixed-point/format';
-import { gainOf } from '../fixed-point/gain-words';
+import { toNumber } from './format';
+import { gainOf } from './gain-words';
+
+/**
+ * Largest clock error that the integrator holds: Lim/(step0·2^G) with hold, an N-th of it without; no more than the
+ * counter's step itself allows, ppm. 0 for order 1, which has no integrator.
+ */
+export function largestErrorHeldPpm(words: ClockWords, samplesPerSymbol: number): number {
+  if (words.order === 1) return 0;
+  const most = words.integratorLimit === null ? 2 ** (words.integratorBits - 1) - 1 : toNumber(words.integratorLimit);
+  const lsb = most / 2 ** words.guardBits / toNumber(words.counter.nominalStep);
+  return Math.min(1, words.hold ? lsb : lsb / samplesPerSymbol) * 1e6;
+}
+
+/** Change of the symbol rate by one counter LSB, Hz. */
+export function rateResolutionHz(
+  { counter, hold }: ClockWords,
+  { symbolRateBd, samplesPerSymbol }: { symbolRateBd: number; samplesPerSymbol: number },
+): number {
+  return (symbolRateBd * (hold ? samplesPerSymbol : 1)) / 2 ** counter.widthBits;
+}
 
 export interface ClockHeadroomInput {
   words: ClockWords;

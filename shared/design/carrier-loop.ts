@@ -9,11 +9,11 @@ import { carrierGains, carrierOscillatorGain } from '../fixed-point/loop-scale';
 import { carrierWords } from '../fixed-point/words';
 import type { CarrierWords } from '../fixed-point/words';
 import type { CompleteCarrier, CompletePlan } from '../plan/complete';
-import { askedOffsetHz } from '../budget/loop-acquisition';
+import { askedOffsetHz } from '../plan/required-offset';
 import { requireLimit, solveStages, stageDesigns, wordStages } from './loop-design';
 import type { SolvedStages } from './loop-design';
-import { averagedSymbols } from './stage-loop';
-import type { StageLoop } from './stage-loop';
+import { averagedSymbols } from '../loop/stage-loop';
+import type { StageLoop } from '../loop/stage-loop';
 
 /** The carrier recovery loop of a plan, worked out. */
 export function carrierLoop(plan: CompletePlan, carrier: CompleteCarrier): LoopDesign {

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { workOut } from '../../../shared/design';
-import { largestErrorHeldPpm } from '../../../shared/loop/clock-loop';
+import { largestErrorHeldPpm } from '../../../shared/fixed-point/clock-headroom';
 import type { ClockWords } from '../../../shared/model/words';
 import { samplePlan } from '../sample-plan';
 

@@ -1,15 +1,15 @@
 import type { LoopDesign } from '../model/design';
-import { clockHeadroom } from '../budget/clock-headroom';
 import { clockAcquisition } from '../budget/loop-acquisition';
 import { clockDetector } from '../detectors/clock';
 import { sCurve } from '../detectors/detector';
-import { toNumber } from '../fixed-point/format';
+import { clockHeadroom, largestErrorHeldPpm, rateResolutionHz } from '../fixed-point/clock-headroom';
 import { clockGains, clockOscillatorGain } from '../fixed-point/loop-scale';
 import { clockWords } from '../fixed-point/words';
 import type { ClockWords } from '../fixed-point/words';
 import type { CompleteClock, CompletePlan } from '../plan/complete';
+import { askedErrorPpm } from '../plan/required-offset';
 import { requireLimit, solveStages, stageDesigns, wordStages } from './loop-design';
-import { averagedSymbols } from './stage-loop';
+import { averagedSymbols } from '../loop/stage-loop';
 
 /** The clock recovery loop of a plan, worked out. */
 export function clockLoop(plan: CompletePlan, clock: CompleteClock): LoopDesign {
@@ -46,7 +46,7 @@ export function clockLoop(plan: CompletePlan, clock: CompleteClock): LoopDesign 
     headroom: clockHeadroom({
       words,
       stageNames: clock.stages.map(({ name }) => name),
-      offsetPpm: 2 * plan.environment.clockTolerancePpm,
+      offsetPpm: askedErrorPpm(plan.environment),
       samplesPerSymbol,
     }),
     budget: null,
@@ -68,23 +68,4 @@ function realisable(clock: CompleteClock) {
     detector: clock.detector as ClockWords['detector'],
     interpolator: clock.interpolator as ClockWords['interpolator'],
   };
-}
-
-/**
- * Largest clock error that the integrator holds: Lim/(step0·2^G) with hold, an N-th of it without; no more than the
- * counter's step itself allows, ppm. 0 for order 1, which has no integrator.
- */
-export function largestErrorHeldPpm(words: ClockWords, samplesPerSymbol: number): number {
-  if (words.order === 1) return 0;
-  const most = words.integratorLimit === null ? 2 ** (words.integratorBits - 1) - 1 : toNumber(words.integratorLimit);
-  const lsb = most / 2 ** words.guardBits / toNumber(words.counter.nominalStep);
-  return Math.min(1, words.hold ? lsb : lsb / samplesPerSymbol) * 1e6;
-}
-
-/** Change of the symbol rate by one counter LSB, Hz. */
-function rateResolutionHz(
-  { counter, hold }: ClockWords,
-  { symbolRateBd, samplesPerSymbol }: { symbolRateBd: number; samplesPerSymbol: number },
-): number {
-  return (symbolRateBd * (hold ? samplesPerSymbol : 1)) / 2 ** counter.widthBits;
 }

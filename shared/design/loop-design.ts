@@ -3,11 +3,11 @@ import type { StageGainWords, StoredInteger } from '../model/words';
 import type { CompleteCarrier, CompleteClock } from '../plan/complete';
 import { toNumber } from '../fixed-point/format';
 import { ParameterError } from '../parameter-error';
-import { linearLoop } from './linear-loop';
-import type { LoopGains } from './linear-loop';
-import { stageDesign } from './stage-design';
-import { averagedSymbols, stageLoop } from './stage-loop';
-import type { StageLoop, WantedLoop } from './stage-loop';
+import { linearLoop } from '../loop/linear-loop';
+import type { LoopGains } from '../loop/linear-loop';
+import { stageDesign } from '../loop/stage-design';
+import { averagedSymbols, stageLoop } from '../loop/stage-loop';
+import type { StageLoop, WantedLoop } from '../loop/stage-loop';
 
 type PlannedLoop = CompleteCarrier | CompleteClock;
 
