@@ -16,9 +16,6 @@ type Quantity = PlanField & { unit: Exclude<Unit, ''> };
 
 const isQuantity = (field: PlanField): field is Quantity => field.unit !== '' && field.unit in fieldUnits;
 
-/** Fields that hold a magnitude of both signs: ±20 ppm. */
-const bothSigns = /(Tolerance(Ppm|Db)|dopplerHz|integratorLimit(Hz|Ppm))$/;
-
 interface Place {
   pointer: string;
   holder: Record<string, unknown>;
@@ -58,7 +55,7 @@ export function readQuantities(plan: Record<string, unknown>): Understood[] {
     for (const { pointer, holder, key } of placesOf(field.pointer, plan)) {
       const written = holder[key];
       if (typeof written !== 'string') continue;
-      const reading = parseQuantity(written, { unit: field.unit, symmetric: bothSigns.test(field.pointer) });
+      const reading = parseQuantity(written, { unit: field.unit, symmetric: field.symmetric ?? false });
       if (reading.kind === 'value') {
         holder[key] = reading.value;
         understood.push({ pointer, written, text: reading.text });

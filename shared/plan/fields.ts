@@ -7,9 +7,12 @@ export interface PlanField {
   label: string;
   /** Unit of the value in the plan; empty where dimensionless. */
   unit: string;
+  /** The value is the magnitude of both signs: ±20 ppm. */
+  symmetric?: true;
 }
 
 const field = (no: string, pointer: string, label: string, unit = ''): PlanField => ({ no, pointer, label, unit });
+const bothSigns = (entry: PlanField): PlanField => ({ ...entry, symmetric: true });
 
 const signal = [
   field('1.1', '/signal/modulation', 'Modulation'),
@@ -18,7 +21,7 @@ const signal = [
   field('1.4', '/signal/rollOff', 'Roll-off α'),
   field('1.5', '/signal/esN0Db', 'Es/N0 at work', 'dB'),
   field('1.6', '/signal/amplitude', 'Amplitude'),
-  field('1.7', '/signal/amplitudeToleranceDb', 'Amplitude error', 'dB'),
+  bothSigns(field('1.7', '/signal/amplitudeToleranceDb', 'Amplitude error', 'dB')),
   field('1.8', '/signal/sampleBits', 'Sample word', 'bits'),
   field('1.9', '/signal/sampleFullScaleLog2', 'Sample full scale'),
   field('1.10', '/signal/ringRatios', 'Ring ratios'),
@@ -62,7 +65,7 @@ const carrier = [
   ...loopFields(2, 'carrier'),
   field('2.8', '/carrier/nco/widthBits', 'NCO', 'bits'),
   field('2.9', '/carrier/nco/phaseBits', 'Phase to rotator', 'bits'),
-  field('2.18', '/carrier/arithmetic/integratorLimitHz', 'Integrator limit', 'Hz'),
+  bothSigns(field('2.18', '/carrier/arithmetic/integratorLimitHz', 'Integrator limit', 'Hz')),
   field('2.24', '/carrier/nco/tableBits', 'Rotator table', 'bits'),
   field('2.25', '/carrier/nco/stepsPerSymbol', 'NCO steps per symbol'),
   field('2.26', '/carrier/nco/centreHz', 'NCO centre', 'Hz'),
@@ -72,7 +75,7 @@ const clock = [
   ...loopFields(3, 'clock'),
   field('3.8', '/clock/counter/widthBits', 'Counter', 'bits'),
   field('3.9', '/clock/counter/fractionBits', 'Fractional interval', 'bits'),
-  field('3.18', '/clock/arithmetic/integratorLimitPpm', 'Integrator limit', 'ppm'),
+  bothSigns(field('3.18', '/clock/arithmetic/integratorLimitPpm', 'Integrator limit', 'ppm')),
   field('3.24', '/clock/counter/tableBits', 'Interpolator table', 'bits'),
   field('3.25', '/clock/interpolator', 'Interpolator'),
   field('3.26', '/clock/hold', 'Control word'),
@@ -80,10 +83,10 @@ const clock = [
 
 const environment = [
   field('4.1', '/environment/carrierFrequencyHz', 'Carrier', 'Hz'),
-  field('4.2', '/environment/carrierTolerancePpm', 'Tolerance, each end', 'ppm'),
-  field('4.3', '/environment/dopplerHz', 'Doppler', 'Hz'),
+  bothSigns(field('4.2', '/environment/carrierTolerancePpm', 'Tolerance, each end', 'ppm')),
+  bothSigns(field('4.3', '/environment/dopplerHz', 'Doppler', 'Hz')),
   field('4.4', '/environment/dopplerRateHzPerS', 'Doppler rate', 'Hz/s'),
-  field('4.5', '/environment/clockTolerancePpm', 'Clock, each end', 'ppm'),
+  bothSigns(field('4.5', '/environment/clockTolerancePpm', 'Clock, each end', 'ppm')),
   field('4.6', '/environment/phaseNoise', 'Oscillator phase noise', 'dBc/Hz'),
 ];
 

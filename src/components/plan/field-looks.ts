@@ -49,12 +49,12 @@ const labels: Record<string, string> = {
 const looks: Record<string, Partial<FieldLook>> = {
   '/signal/rollOff': { decimals: 2 },
   '/signal/amplitude': { decimals: 2 },
-  '/signal/amplitudeToleranceDb': { symmetric: true, decimals: 1 },
+  '/signal/amplitudeToleranceDb': { decimals: 1 },
   '/signal/sampleFullScaleLog2': { power: true, symmetric: true },
   '/environment/carrierFrequencyHz': { optional: true },
-  '/environment/carrierTolerancePpm': { symmetric: true, ratioOf: 'carrier' },
-  '/environment/dopplerHz': { symmetric: true, ratioOf: 'carrier' },
-  '/environment/clockTolerancePpm': { symmetric: true, ratioOf: 'symbol-rate' },
+  '/environment/carrierTolerancePpm': { ratioOf: 'carrier' },
+  '/environment/dopplerHz': { ratioOf: 'carrier' },
+  '/environment/clockTolerancePpm': { ratioOf: 'symbol-rate' },
   '/limits/phaseJitterDeg': { unit: '° rms', decimals: 1 },
   '/limits/timingJitterSymbols': { decimals: 3 },
   '/limits/bandwidthError': { unit: '%', decimals: 1 },
@@ -66,8 +66,8 @@ const looks: Record<string, Partial<FieldLook>> = {
   'stages/*/until/lockMetric': { optional: true, decimals: 2 },
   'nco/centreHz': { ratioOf: 'carrier' },
   'arithmetic/errorFullScaleLog2': { power: true, symmetric: true },
-  'arithmetic/integratorLimitHz': { symmetric: true, optional: true, ratioOf: 'carrier' },
-  'arithmetic/integratorLimitPpm': { symmetric: true, optional: true, ratioOf: 'symbol-rate' },
+  'arithmetic/integratorLimitHz': { optional: true, ratioOf: 'carrier' },
+  'arithmetic/integratorLimitPpm': { optional: true, ratioOf: 'symbol-rate' },
   'arithmetic/gainForm': { control: 'select' },
   'arithmetic/overflow': {
     control: 'segments',
@@ -114,6 +114,7 @@ export function lookOf(pointer: string): FieldLook {
     unit: (field?.unit ?? '') as Unit,
     options,
     integer: rule.type === 'integer',
+    ...(field?.symmetric && { symmetric: true }),
     ...special,
   };
 }
