@@ -1,3 +1,4 @@
+import { bandwidthOverOmega } from '../../../shared/loop/gains';
 import { valueAt, withValue } from '../../../shared/plan/pointer';
 import type { DraftPlan } from '../../api/plans';
 
@@ -60,14 +61,13 @@ export function withOrder(plan: DraftPlan, loop: LoopName, order: number): Draft
 }
 
 /**
- * The same stage told by its natural frequency instead of its bandwidth, or the other way round (order 2):
- * ωn = 2 Bn/(ζ + 1/(4ζ)).
+ * The same stage told by its natural frequency instead of its bandwidth, or the other way round (order 2).
  *
  * @param symbolRateBd turns Bn·T into Hz
  */
 export function toldOtherwise(stage: DraftStage, symbolRateBd: number): DraftStage {
   const { damping: zeta = Math.SQRT1_2, noiseBandwidth, naturalFrequencyHz, ...rest } = stage;
-  const perBandwidth = symbolRateBd / (Math.PI * (zeta + 1 / (4 * zeta)));
+  const perBandwidth = symbolRateBd / (2 * Math.PI * bandwidthOverOmega(2, zeta));
   return noiseBandwidth === undefined
     ? { ...rest, damping: zeta, noiseBandwidth: rounded((naturalFrequencyHz ?? 0) / perBandwidth) }
     : { ...rest, damping: zeta, naturalFrequencyHz: rounded(noiseBandwidth * perBandwidth) };
