@@ -1,3 +1,4 @@
+import { interpolate } from '../../shared/math/interpolation';
 import type { Design, StageDesign } from '../../shared/model/design';
 import type { LoopSummary } from '../repositories/revision-rows';
 
@@ -7,15 +8,6 @@ const last = 1200;
 
 /** Loop updates at which a list draws the phase step: 48, evenly spaced on a log axis from 4 to 1200. */
 const grid = Array.from({ length: samples }, (_, i) => first * (last / first) ** (i / (samples - 1)));
-
-/** Straight lines between the points of a curve, its end values outside. `x` rises. */
-function interpolate(x: readonly number[], y: readonly number[], at: number): number {
-  const right = x.findIndex((value) => value >= at);
-  if (right <= 0) return (right === 0 ? y[0] : y.at(-1)) ?? 0;
-  const span = x[right]! - x[right - 1]!;
-  const share = (at - x[right - 1]!) / span;
-  return y[right - 1]! + share * (y[right]! - y[right - 1]!);
-}
 
 const stepOf = ({ phaseStep: { updates, phase } }: StageDesign): number[] =>
   grid.map((at) => Number(interpolate(updates, phase, at).toPrecision(4)));
