@@ -24,7 +24,7 @@ const canRun = (path) => {
 };
 
 /** @returns {boolean} */
-export const isPresent = (/** @type {string} */ program) => folders.some((folder) => canRun(join(folder, program)));
+const isPresent = (/** @type {string} */ program) => folders.some((folder) => canRun(join(folder, program)));
 
 const install = ['install', '-y', '-qq', '--no-install-recommends', '-o', 'DPkg::Lock::Timeout=300'];
 

@@ -7,7 +7,7 @@ const firstPort = 20_000;
 const lastPort = 32_767;
 
 /** @returns {Promise<string | undefined>} the system's error code when the port cannot be listened on */
-export function listenError(/** @type {number} */ port, host = '127.0.0.1') {
+function listenError(/** @type {number} */ port, host = '127.0.0.1') {
   return new Promise((resolve) => {
     const probe = createServer();
     probe.once('error', (/** @type {NodeJS.ErrnoException} */ error) => resolve(error.code ?? error.message));

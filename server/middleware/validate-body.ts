@@ -7,7 +7,7 @@ import { validatorOf, type SchemaName } from '../schemas';
 import { storageFault } from '../storable';
 
 /** Largest body that is read, unpacked, in bytes. */
-export const largestBody = 1_000_000;
+const largestBody = 1_000_000;
 
 const requireMedia =
   (types: string[]): RequestHandler =>

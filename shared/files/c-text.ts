@@ -46,7 +46,7 @@ const names: Record<string, string> = {
 };
 
 /** Printable ASCII for any text; a character with no counterpart becomes an underscore, a control a space. */
-export function asciiText(text: string): string {
+function asciiText(text: string): string {
   const named = [...text].map((character) => names[character] ?? character).join('');
   const plain = named.normalize('NFKD').replace(/\p{M}/gu, '');
   return [...plain]

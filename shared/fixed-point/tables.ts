@@ -1,6 +1,5 @@
 import type { CarrierWords, Words } from '../model/words';
 import { constellation } from './constellation';
-import { interpolatorTable, type InterpolatorTable } from './interpolator-table';
 import { rotatorTable, type RotatorTable } from './rotator-table';
 
 /** Decision points as integers, pairs [in-phase, quadrature] in the order of the point list. */
@@ -19,13 +18,6 @@ export interface CarrierTables extends RotatorTable {
 /** log2 of one sample LSB, lz = kz − (Wz − 1). */
 export const sampleLsbLog2 = ({ sampleFullScaleLog2, sampleBits }: Words): number =>
   sampleFullScaleLog2 - (sampleBits - 1);
-
-/** The integer tables beside a clock loop's words. */
-export type ClockTables = InterpolatorTable;
-
-/** The tables of either loop, plain JSON. */
-export const loopTables = (words: Words): CarrierTables | ClockTables =>
-  words.loop === 'carrier' ? carrierTables(words) : interpolatorTable(words);
 
 /** Works the tables of a carrier loop out; two libraries may differ in a last bit here, so they are kept. */
 export function carrierTables(words: CarrierWords): CarrierTables {

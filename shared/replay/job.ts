@@ -37,7 +37,7 @@ export interface GridPoint {
 export const mostSymbols = 2e10;
 
 /** The same where no double holds the words and every node is an unbounded integer. */
-export const mostSymbolsInIntegers = 1e9;
+const mostSymbolsInIntegers = 1e9;
 
 const replayable = ['bpsk', 'qpsk', '8psk', '16qam', '64qam'];
 

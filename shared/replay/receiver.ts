@@ -8,7 +8,7 @@ import { TrialRandom } from './random';
 import { symbolSource } from './source';
 
 /** Symbols that are worked out together. */
-export const blockSymbols = 256;
+const blockSymbols = 256;
 
 /** What a block of a trial showed, for whoever looks on. */
 export interface BlockView {

@@ -18,9 +18,6 @@ export function rowsText(rows: readonly (readonly string[])[], format: TableForm
     .join('');
 }
 
-export const copyTable = async (table: HTMLTableElement, format: TableFormat = 'tsv'): Promise<void> =>
-  navigator.clipboard.writeText(tableText(table, format));
-
 /** Sups become ^: 996·2^-5 is what a script can read. */
 function cellText(cell: HTMLTableCellElement): string {
   const copy = cell.cloneNode(true) as HTMLTableCellElement;

@@ -40,5 +40,3 @@ export function useTargetValues(slug: string, map: Ref<RegisterMap | undefined>)
   });
   return { plans, chosen, revision, values, findings, name, stages, error, load };
 }
-
-export type TargetValues = ReturnType<typeof useTargetValues>;

@@ -11,7 +11,7 @@ export type PhaseDetector = (z: ExactSample, half: ExactSample, known: number) =
 const sgn = (value: bigint): bigint => (value < 0n ? -1n : 1n);
 
 /** Bits to which the power law cuts each rail, so that u^M stays inside 64 bits. */
-export const powerLawBits = { 2: 24, 4: 13, 8: 7 } as const;
+const powerLawBits = { 2: 24, 4: 13, 8: 7 } as const;
 
 /** Right shift t of each rail before the power law. */
 export const powerLawShift = ({ sampleBits, power }: CarrierWords): number =>

@@ -5,7 +5,7 @@ import type { State } from '../states';
 import { offsetsOf } from './check-points';
 import { offsetScale, type OffsetScale } from './offset-scale';
 
-export const verdictWords: Record<Verdict, string> = {
+const verdictWords: Record<Verdict, string> = {
   pass: 'Locks over the whole range',
   fail: 'Does not lock everywhere',
   undecided: 'Not enough trials to say',
