@@ -16,7 +16,10 @@ function startBoth(database, { apiPort, webPort }) {
   };
   const { execPath } = process;
   return {
-    'The server': supervise([execPath, 'node_modules/tsx/dist/cli.mjs', 'watch', '--clear-screen=false', 'server/index.ts'], environment),
+    'The server': supervise(
+      [execPath, 'node_modules/tsx/dist/cli.mjs', 'watch', '--clear-screen=false', 'server/index.ts'],
+      environment,
+    ),
     'The web application': supervise([execPath, 'node_modules/@quasar/app-vite/bin/quasar.js', 'dev'], ports),
   };
 }
