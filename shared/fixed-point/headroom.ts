@@ -1,6 +1,7 @@
 import type { HeadroomNode } from '../model/design';
 import type { CarrierWords, StageGainWords } from '../model/words';
 import { detectorExtremes } from './detector-extremes';
+import { numberText } from '../quantities/format';
 import { toBigInt, toNumber } from './format';
 import { gainOf } from './gain-words';
 import { errorLsb } from './loop-scale';
@@ -167,4 +168,4 @@ const railNoise = ({ amplitude, esN0Db }: HeadroomInput): number => amplitude / 
 const noisySignal = ({ amplitude, esN0Db }: HeadroomInput): string =>
   `amplitude ${decimal(amplitude)} with 4σ of noise at ${decimal(esN0Db)} dB`;
 
-const decimal = (value: number): string => String(Number(value.toPrecision(6))).replace('-', '−');
+const decimal = (value: number): string => numberText(value, { significant: 6 });

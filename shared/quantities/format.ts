@@ -78,6 +78,12 @@ export function formatQuantity(value: number, style: QuantityStyle): QuantityPar
   return { number, unit: prefix + style.unit, exponent };
 }
 
+/** One unit for several quantities, so that they can be compared at a glance: the one that suits the largest. */
+export function commonUnit(values: readonly number[], unit: Unit): { unit: string; exponent: number } {
+  const [prefix, exponent] = prefixFor(Math.max(0, ...values.map(Math.abs)));
+  return { unit: prefix + unit, exponent };
+}
+
 /** Number and unit in one text: `±77.5 kHz`, `45°`, `3.0° rms`. */
 export function quantityText(value: number, style: QuantityStyle): string {
   const { number, unit } = formatQuantity(value, style);

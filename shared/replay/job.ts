@@ -3,6 +3,7 @@ import type { CarrierTables } from '../fixed-point/tables';
 import type { ToleranceCheck } from '../model/tolerance-check';
 import type { CarrierWords } from '../model/words';
 import { ParameterError } from '../parameter-error';
+import { numberText } from '../quantities/format';
 
 /** A tolerance check with its offsets written out. */
 export interface ReplayCheck {
@@ -80,14 +81,12 @@ export function assertAffordable(check: ToleranceCheck, most = mostSymbols): voi
   const affordable = Math.floor(most / perTrial);
   throw new ParameterError(
     '/trials',
-    `the check runs ${grouped(perTrial * trials)} symbols, the most is ${grouped(most)}: ` +
+    `the check runs ${numberText(perTrial * trials)} symbols, the most is ${numberText(most)}: ` +
       (affordable > 0
         ? `at most ${affordable} trials with these points and symbols`
         : 'ask for fewer points or symbols'),
   );
 }
-
-const grouped = (value: number): string => value.toLocaleString('en').replaceAll(',', ' ');
 
 /**
  * Refuses what the simulator does not cover: it has one sample a symbol, so no OQPSK, and draws the symbols of

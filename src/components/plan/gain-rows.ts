@@ -1,4 +1,5 @@
 import type { LoopDesign, StageDesign } from '../../../shared/model/design';
+import { commonUnit, moveDecimals } from '../../../shared/quantities/format';
 
 /** A number in a cell and how many digits it earns. */
 export interface GainCell {
@@ -26,15 +27,6 @@ export interface GainGroup {
   rows: GainRow[];
 }
 
-const prefixes: [number, string][] = [
-  [1e9, 'GHz'],
-  [1e6, 'MHz'],
-  [1e3, 'kHz'],
-  [1, 'Hz'],
-  [1e-3, 'mHz'],
-  [1e-6, 'µHz'],
-];
-
 /** Everything that a design says of a loop's stages: asked for, reached, gains, words. */
 export function gainGroups(loop: LoopDesign): GainGroup[] {
   const { stages } = loop;
@@ -61,14 +53,14 @@ const row = (label: string, unit: string, style: Omit<GainCell, 'value'>, read: 
 /** A row of frequencies, all in the prefix that suits the largest. */
 const frequencies = (label: string, digits: number, read: Read) => ({
   of: (stages: readonly StageDesign[]): GainRow => {
-    const largest = Math.max(0, ...stages.map((stage) => Math.abs(read(stage) ?? 0)));
-    const [scale, unit] = prefixes.find(([at]) => largest >= at) ?? [1, 'Hz'];
-    return row(label, unit, { decimals: digits }, (stage) => scaled(read(stage), scale)).of(stages);
+    const values = stages.map((stage) => read(stage) ?? 0);
+    const { unit, exponent } = commonUnit(values, 'Hz');
+    return row(label, unit, { decimals: digits }, (stage) => moved(read(stage), -exponent)).of(stages);
   },
 });
 
-const scaled = (value: number | null | undefined, scale: number): number | null =>
-  value === null || value === undefined ? null : value / scale;
+const moved = (value: number | null | undefined, exponent: number): number | null =>
+  value === null || value === undefined ? null : moveDecimals(value, exponent);
 
 const percent = (value: number | null): number | null => (value === null ? null : 100 * value);
 const decibels = (ratio: number | null): number | null => (ratio === null ? null : 20 * Math.log10(ratio));
@@ -115,7 +107,10 @@ function loopGainRows(stages: readonly StageDesign[]): GainRow[] {
 
 /** What one detector unit turns the oscillator by: the loop's gains over the slope of the detector. */
 function detectorGainRows(stages: readonly StageDesign[], slope: number): GainRow[] {
-  const over = (name: GainName) => (stage: StageDesign) => scaled(gainOf(stage, name), slope);
+  const over = (name: GainName) => (stage: StageDesign) => {
+    const gain = gainOf(stage, name);
+    return gain === null ? null : gain / slope;
+  };
   return present([
     row('Proportional', '', scientific, over('g1')).of(stages),
     row('Integral', '', scientific, over('g2')).of(stages),
@@ -172,8 +167,8 @@ function rangeRows({ detector, stages, acquisition, resolutionHz }: LoopDesign):
 }
 
 function inPrefix(value: number | null): { value: number | null; unit: string } {
-  const [scale, unit] = prefixes.find(([at]) => Math.abs(value ?? 0) >= at) ?? [1, 'Hz'];
-  return { value: scaled(value, scale), unit };
+  const { unit, exponent } = commonUnit([value ?? 0], 'Hz');
+  return { value: moved(value, -exponent), unit };
 }
 
 /** Characters that a cell sets behind its point, the point and the exponent included: what aligns a column. */

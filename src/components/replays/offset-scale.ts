@@ -1,4 +1,4 @@
-import { formatQuantity, moveDecimals, numberText } from '../../../shared/quantities/format';
+import { commonUnit, moveDecimals, numberText } from '../../../shared/quantities/format';
 
 /** One unit for all offsets of a check, so that they can be compared at a glance. */
 export interface OffsetScale {
@@ -17,7 +17,7 @@ const finest = 3;
 /** @param offsetsHz every offset that will be shown; the largest sets the unit, the finest the digits */
 export function offsetScale(offsetsHz: readonly number[]): OffsetScale {
   const largest = Math.max(0, ...offsetsHz.map(Math.abs));
-  const { unit, exponent = 0 } = formatQuantity(largest, { unit: 'Hz' });
+  const { unit, exponent } = commonUnit(offsetsHz, 'Hz');
   const of = (hertz: number) => moveDecimals(hertz, -exponent);
   const decimals = Math.max(0, ...offsetsHz.map((hertz) => digitsNeeded(of(hertz), of(largest))));
   return { unit, decimals, of, text: (hertz) => numberText(of(hertz), { decimals, sign: true }) };

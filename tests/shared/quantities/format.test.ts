@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { formatQuantity, numberText, plainText, quantityText } from '../../../shared/quantities/format';
+import { commonUnit, formatQuantity, numberText, plainText, quantityText } from '../../../shared/quantities/format';
 import { parseQuantity } from '../../../shared/quantities/parse';
 import type { Unit } from '../../../shared/quantities/units';
 
@@ -58,5 +58,17 @@ describe('formatQuantity', () => {
 describe('plainText', () => {
   it('gives ASCII that a spreadsheet reads', () => {
     expect(plainText('\u22122\u202f587.5')).toBe('-2587.5');
+  });
+});
+
+describe('commonUnit', () => {
+  it.each([
+    [[70_000, -77_500], 'kHz', 3],
+    [[2250, 1e6], 'MHz', 6],
+    [[0, 0.0064], 'mHz', -3],
+    [[0], 'Hz', 0],
+    [[], 'Hz', 0],
+  ])('%j Hz are in %s', (values, unit, exponent) => {
+    expect(commonUnit(values, 'Hz')).toEqual({ unit, exponent });
   });
 });
