@@ -1,3 +1,4 @@
+import { significantDown, significantUp } from '../math/significant';
 import type { Finding } from '../model/design';
 import { numberText, quantityText } from '../quantities/format';
 
@@ -38,13 +39,7 @@ export const say = (value: number, significant = 3): string => numberText(value,
 export const sayHz = (value: number): string => quantityText(value, { unit: 'Hz', significant: 3 });
 
 /** Largest number of two significant digits that is not above the value. */
-export function twoDigitsDown(value: number): number {
-  const unit = 10 ** (Math.floor(Math.log10(value)) - 1);
-  return Number((Math.floor(value / unit + 1e-9) * unit).toPrecision(2));
-}
+export const twoDigitsDown = (value: number): number => significantDown(value, 2);
 
 /** Smallest number of two significant digits that is not below the value. */
-export function twoDigitsUp(value: number): number {
-  const unit = 10 ** (Math.floor(Math.log10(value)) - 1);
-  return Number((Math.ceil(value / unit - 1e-9) * unit).toPrecision(2));
-}
+export const twoDigitsUp = (value: number): number => significantUp(value, 2);

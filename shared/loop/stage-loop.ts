@@ -5,6 +5,7 @@ import type { LoopShape } from './exact-gains';
 import { bandwidthOverOmega, nominalGains, thetaOf } from './gains';
 import { linearLoop } from './linear-loop';
 import type { LinearLoop } from './linear-loop';
+import { significantDown } from '../math/significant';
 
 /** Bandwidths that are worked out, cycles per update. */
 const narrowest = 1e-7;
@@ -120,8 +121,5 @@ function thetaAt({ pointer, stage, loop }: WantedLoop, omegaTu: number): number 
   throw new ParameterError(`${pointer}/${key}`, 'a pre-warped loop must stay below half the update rate');
 }
 
-/** Four significant digits, not above the value. */
-function roundedDown(value: number): number {
-  const unit = 10 ** (Math.floor(Math.log10(value)) - 3);
-  return Number((Math.floor(value / unit + 1e-9) * unit).toPrecision(4));
-}
+/** A limit that is named must itself be allowed. */
+const roundedDown = (value: number): number => significantDown(value, 4);
