@@ -1,16 +1,19 @@
 import type { Finding } from '../model/design';
-import { finding, passed, remedyUnless, say, sayHz, setTo, twoDigitsUp } from './finding';
+import { largestOffsetHeldHz } from '../fixed-point/headroom';
+import type { CarrierWords } from '../fixed-point/words';
+import { finding, passed, remedyUnless, say, sayHz, twoDigitsUp } from './finding';
 import type { Remedy, Severity } from './finding';
 import { askedOf, bandwidthPointer, numberOf, pointerOf, stageAt, stageName } from './loop-view';
 import type { LoopView, StageView } from './loop-view';
 import { fieldNumber } from '../plan/fields';
-import { setBandwidth } from './narrower';
+import { loopAt, setBandwidth } from './narrower';
 import { inOneUnit } from './prefix';
+import { widerIntegrator } from './wider-integrator';
 
-/** Range that a remedy leaves beyond what is asked. */
-const spareShare = 1.1;
 /** A pull-in estimate is good to about this factor. */
 const estimateFactor = 2;
+/** Time that a wider loop leaves free: its bandwidth does not grow quite as the one that is asked for. */
+const spareTime = 1.1;
 
 export const acquisitionFindings = (view: LoopView): Finding[] => [
   ...(view.key === 'carrier' ? [...ambiguity(view), ...integratorRange(view)] : []),
@@ -55,7 +58,15 @@ function integratorRange(view: LoopView): Finding[] {
         severity === 'pass'
           ? `It holds ±${sayHz(largestOffsetHz)}; the carrier can be ±${sayHz(offsetHz)} off (4.2, 4.3).`
           : `${numberOf(view, path)} stops short of the carrier offset: it holds ±${sayHz(largestOffsetHz)}; the carrier can be ±${sayHz(offsetHz)} off (4.2, 4.3). Beyond that the loop never locks.`,
-      ...remedyUnless(severity, () => widerIntegrator(view, offsetHz / largestOffsetHz)),
+      ...remedyUnless(severity, () =>
+        widerIntegrator(view, {
+          asked: offsetHz,
+          word: wordRangeHz(view),
+          limit: limitHz(view),
+          limitPath: 'arithmetic/integratorLimitHz',
+          text: (value) => `±${sayHz(value)}`,
+        }),
+      ),
       fields: [pointerOf(view, path), '/environment/carrierTolerancePpm', '/environment/dopplerHz'],
       source: 'follows from the datapath, exact',
     }),
@@ -65,26 +76,9 @@ function integratorRange(view: LoopView): Finding[] {
 const limitHz = ({ loop }: LoopView): number | undefined =>
   (loop.arithmetic as { integratorLimitHz?: number }).integratorLimitHz;
 
-/** A higher limit where the word can hold it, else a wider word. */
-function widerIntegrator(view: LoopView, shortBy: number): Remedy | null {
-  const limit = limitHz(view);
-  const asked = view.design.acquisition.offsetHz as number;
-  const full = wordRangeHz(view);
-  if (limit !== undefined && full >= spareShare * asked) {
-    const value = twoDigitsUp(spareShare * asked);
-    const path = 'arithmetic/integratorLimitHz';
-    return setTo(numberOf(view, path), pointerOf(view, path), value, `±${sayHz(value)}`);
-  }
-  const path = 'arithmetic/integratorBits';
-  const bits = view.loop.arithmetic.integratorBits + Math.max(1, Math.ceil(Math.log2(shortBy)));
-  return bits <= 64 ? setTo(numberOf(view, path), pointerOf(view, path), bits, `${bits} bits`) : null;
-}
-
 /** What the integrator's word alone would hold, Hz. */
-function wordRangeHz({ design, loop }: LoopView): number {
-  const { integratorBits, guardBits } = loop.arithmetic;
-  return 2 ** (integratorBits - 1 - guardBits) * (design.resolutionHz ?? 0);
-}
+const wordRangeHz = ({ design, plan }: LoopView): number =>
+  largestOffsetHeldHz({ ...(design.words as CarrierWords), integratorLimit: null }, plan.signal.symbolRateBd);
 
 function pullIn(view: LoopView): Finding[] {
   const estimate = view.design.acquisition.pullInSymbols;
@@ -130,11 +124,22 @@ function faster(view: LoopView, first: StageView, limit: number): Remedy | null 
   const settling = (first.result.settlingUpdates as number) * view.loop.updateInterval;
   const time = (factor: number): number => pull / factor ** 3 + settling / factor;
   let factor = 1;
-  while (estimateFactor * time(factor) > limit && factor < 100) factor *= 1.05;
-  const asked = askedOf(first);
-  const product = view.loop.delay * (first.result.noiseBandwidth.exact ?? 0) * view.loop.updateInterval * factor;
-  if (factor >= 100 || product > 0.1 || (first.stage.noiseBandwidth ?? 0) * factor * view.loop.updateInterval > 0.1) {
-    return { remedy: 'Replay the range of offsets, or allow more symbols.', change: null };
-  }
-  return setBandwidth(first, twoDigitsUp(factor * asked));
+  while (spareTime * estimateFactor * time(factor) > limit && factor < 100) factor *= 1.05;
+  const value = twoDigitsUp(factor * askedOf(first));
+  return isBearable(first, factor) && loopAt(first, value) !== null ? setBandwidth(first, value) : moreTime(view);
 }
+
+/** Whether a stage that is wider by a factor still bears its delay. */
+function isBearable({ loop, result, stage }: StageView, factor: number): boolean {
+  const product = loop.delay * (result.noiseBandwidth.exact ?? 0) * loop.updateInterval * factor;
+  return factor < 100 && product <= 0.1 && (stage.noiseBandwidth ?? 0) * factor * loop.updateInterval <= 0.1;
+}
+
+/** A replay covers the carrier loop alone. */
+const moreTime = ({ key }: LoopView): Remedy => ({
+  remedy:
+    key === 'carrier'
+      ? 'Replay the range of offsets, or allow more symbols.'
+      : 'Allow more symbols, or shorten the delay.',
+  change: null,
+});

@@ -1,9 +1,12 @@
 import type { Finding } from '../model/design';
 import { gardnerSlope } from '../detectors/clock';
-import { finding, passed, remedyUnless, say, setTo, twoDigitsUp } from './finding';
-import type { Remedy, Severity } from './finding';
+import type { ClockWords } from '../fixed-point/words';
+import { largestErrorHeldPpm } from '../fixed-point/clock-headroom';
+import { finding, passed, remedyUnless, say } from './finding';
+import type { Severity } from './finding';
 import { numberOf, pointerOf } from './loop-view';
 import type { LoopView } from './loop-view';
+import { widerIntegrator } from './wider-integrator';
 
 /** Half of the slope at roll-off 0.2. */
 const leastSlope = 0.3;
@@ -28,7 +31,15 @@ function ppmRange(view: LoopView): Finding[] {
       sense: 'min',
       unit: 'ppm',
       reason: `${numberOf(view, path)} holds ±${say(largestOffsetPpm)} ppm; both ends together can be ±${say(offsetPpm)} ppm off (4.5).${severity === 'pass' ? '' : ' Beyond that the strobe slips for ever.'}`,
-      ...remedyUnless(severity, () => widerIntegrator(view, { asked: offsetPpm, held: largestOffsetPpm })),
+      ...remedyUnless(severity, () =>
+        widerIntegrator(view, {
+          asked: offsetPpm,
+          word: wordRangePpm(view),
+          limit: limitPpm(view),
+          limitPath: 'arithmetic/integratorLimitPpm',
+          text: (value) => `±${say(value)} ppm`,
+        }),
+      ),
       fields: [pointerOf(view, path), '/environment/clockTolerancePpm'],
       source: 'follows from the datapath, exact',
     }),
@@ -38,16 +49,9 @@ function ppmRange(view: LoopView): Finding[] {
 const limitPpm = ({ loop }: LoopView): number | undefined =>
   (loop.arithmetic as { integratorLimitPpm?: number }).integratorLimitPpm;
 
-function widerIntegrator(view: LoopView, { asked, held }: { asked: number; held: number }): Remedy | null {
-  if (limitPpm(view) !== undefined) {
-    const value = twoDigitsUp(1.1 * asked);
-    const path = 'arithmetic/integratorLimitPpm';
-    return setTo(numberOf(view, path), pointerOf(view, path), value, `±${say(value)} ppm`);
-  }
-  const path = 'arithmetic/integratorBits';
-  const bits = view.loop.arithmetic.integratorBits + Math.max(1, Math.ceil(Math.log2(asked / held)));
-  return bits <= 64 ? setTo(numberOf(view, path), pointerOf(view, path), bits, `${bits} bits`) : null;
-}
+/** What the integrator's word alone would hold, ppm. */
+const wordRangePpm = ({ design, plan }: LoopView): number =>
+  largestErrorHeldPpm({ ...(design.words as ClockWords), integratorLimit: null }, plan.signal.samplesPerSymbol);
 
 function slope(view: LoopView): Finding {
   const { rollOff } = view.plan.signal;
@@ -63,7 +67,7 @@ function slope(view: LoopView): Finding {
     unit: 'per symbol',
     reason: `At roll-off ${say(rollOff)} (1.4) the Gardner detector has a slope of ${say(value)} per symbol at unit amplitude. Its own pattern noise does not fall with it.`,
     ...remedyUnless(severity, () => ({
-      remedy: 'Take a wider roll-off, or a narrower clock loop than the budget says.',
+      remedy: 'Take a wider roll-off, or a narrower clock loop.',
       change: null,
     })),
     fields: ['/signal/rollOff', pointerOf(view, 'detector')],

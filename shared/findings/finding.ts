@@ -28,6 +28,12 @@ export function setTo(no: string, pointer: string, value: string | number | bool
   return { remedy: `${label}.`, change: { pointer, value, label } };
 }
 
+/** The same edit, and in its sentence what is left to do after it. */
+export const followedBy = ({ change }: Remedy, next: string): Remedy => ({
+  remedy: `${change?.label}, then ${next}.`,
+  change,
+});
+
 /** A remedy only where something is wrong. */
 export const remedyUnless = (severity: Severity, make: () => Remedy | null): Partial<Remedy> =>
   severity === 'pass' ? {} : (make() ?? {});

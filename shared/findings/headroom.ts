@@ -57,7 +57,10 @@ const checks: Record<HeadroomNode['node'], NodeCheck> = {
     fault: 'The proportional path leaves its word',
     why: 'The loop loses the gain that keeps it damped.',
     field: (view) => pointerOf(view, oscillator(view)),
-    remedy: () => null,
+    remedy: (view) => ({
+      remedy: `Lower ${numberOf(view, 'stages/0/noiseBandwidth')}, or the scale of the error (${numberOf(view, 'arithmetic/errorFullScaleLog2')}).`,
+      change: null,
+    }),
     fatal: true,
   },
   increment: {
@@ -73,8 +76,7 @@ const checks: Record<HeadroomNode['node'], NodeCheck> = {
     fault: 'The integrator is too narrow',
     why: 'Beyond its range the loop cannot follow the offset.',
     field: (view) => pointerOf(view, 'arithmetic/integratorBits'),
-    remedy: (view, missing) =>
-      limitOf(view) === undefined ? widen('arithmetic/integratorBits', 64)(view, missing) : null,
+    remedy: widen('arithmetic/integratorBits', 64),
     fatal: true,
   },
   'frequency-word': {
@@ -153,8 +155,12 @@ function severityOf(
 ): Severity {
   if (headroomBits >= limit) return 'pass';
   const overflow = node === 'frequency-word' ? 'wrap' : view.loop.arithmetic.overflow[node];
-  return headroomBits < 0 && (fatal || overflow === 'wrap') ? 'fail' : 'caution';
+  return headroomBits < 0 && ((fatal && isReached(view, node)) || overflow === 'wrap') ? 'fail' : 'caution';
 }
+
+/** A clock loop is measured by a full-scale error, which its signal need not ever make. */
+const isReached = ({ key }: LoopView, node: HeadroomNode['node']): boolean =>
+  key === 'carrier' || node === 'integrator';
 
 const upperFirst = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
 

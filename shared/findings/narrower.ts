@@ -34,7 +34,8 @@ export function setBandwidth(view: StageView, value: number): Remedy {
   return setTo(`${fieldNumber(pointer)} of ${view.stage.name}`, pointer, value, text);
 }
 
-function loopAt({ key, index, stage, loop, plan }: StageView, value: number): LinearLoop | null {
+/** The loop of a stage with another bandwidth; null where no gains make it. */
+export function loopAt({ key, index, stage, loop, plan }: StageView, value: number): LinearLoop | null {
   const bandwidth = stage.noiseBandwidth === undefined ? { naturalFrequencyHz: value } : { noiseBandwidth: value };
   const pointer = `/${key}/stages/${index}`;
   try {

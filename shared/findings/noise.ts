@@ -1,7 +1,8 @@
 import type { Finding, StageJitter } from '../model/design';
-import { finding, passed, remedyUnless, say, twoDigitsDown } from './finding';
-import type { Severity } from './finding';
-import { bandwidthPointer, lastStage, stageName } from './loop-view';
+import { bandwidthOverOmega } from '../loop/gains';
+import { finding, followedBy, passed, remedyUnless, say, twoDigitsDown } from './finding';
+import type { Remedy, Severity } from './finding';
+import { askedOf, bandwidthPointer, lastStage, stageName } from './loop-view';
 import type { LoopView, StageView } from './loop-view';
 import { setBandwidth } from './narrower';
 
@@ -33,7 +34,7 @@ export function noiseFindings(view: LoopView): Finding[] {
       sense: 'max',
       unit: '° rms',
       reason: `${stageName(at)}: ${parts(jitter)}, together ${say(jitter.total)}° of ${say(limit)}° (5.1).${better === null || severity === 'pass' ? '' : ` BnT ${say(better.noiseBandwidth)} gives ${say(better.total)}°, the least there is.`}`,
-      ...remedyUnless(severity, () => (better === null ? null : setBandwidth(at, better.noiseBandwidth))),
+      ...remedyUnless(severity, () => quieter(at, jitter, limit)),
       fields: [bandwidthPointer(at), '/limits/phaseJitterDeg', '/environment/phaseNoise', '/signal/esN0Db'],
       source:
         jitter.oscillator === null
@@ -48,13 +49,35 @@ const parts = ({ thermal, oscillator }: StageJitter): string =>
     ? `thermal ${say(thermal as number)}°`
     : `oscillator ${say(oscillator)}°, thermal ${say(thermal as number)}°`;
 
-/** The bandwidth with the least jitter, where it is worth a change; without a mask, narrowing always helps. */
-function betterBandwidth(at: StageView, total: number): { noiseBandwidth: number; total: number } | null {
-  const { budget } = at.design;
-  if (at.stage.noiseBandwidth === undefined || !budget) return null;
-  if (budget.best)
-    return budget.best.total < 0.98 * total
-      ? { ...budget.best, noiseBandwidth: twoDigitsDown(budget.best.noiseBandwidth) }
-      : null;
-  return null;
+interface BetterBandwidth {
+  noiseBandwidth: number;
+  total: number;
+}
+
+/** The bandwidth with the least jitter, where it is worth a change. */
+function betterBandwidth({ design: { budget } }: StageView, total: number): BetterBandwidth | null {
+  const best = budget?.best;
+  return best && best.total < 0.98 * total ? { ...best, noiseBandwidth: twoDigitsDown(best.noiseBandwidth) } : null;
+}
+
+/** The bandwidth with the least jitter; where noise alone counts, the one that keeps the limit: jitter goes with √BnT. */
+function quieter(at: StageView, jitter: StageJitter, limit: number): Remedy {
+  const total = jitter.total as number;
+  const better = betterBandwidth(at, total);
+  if (better) {
+    const set = setBandwidth(at, twoDigitsDown((askedOf(at) * better.noiseBandwidth) / nominalBandwidth(at)));
+    return better.total > limit ? followedBy(set, otherMeans) : set;
+  }
+  if (jitter.oscillator === null) return setBandwidth(at, twoDigitsDown(askedOf(at) * (limit / total) ** 2));
+  return { remedy: `No bandwidth keeps the limit: ${otherMeans}.`, change: null };
+}
+
+const otherMeans = 'raise 1.5, take a quieter oscillator (4.6), or allow more (5.1)';
+
+/** BnT that a stage asks for, also where it asks for a natural frequency. */
+function nominalBandwidth({ stage, result, loop, plan }: StageView): number {
+  if (stage.noiseBandwidth !== undefined) return stage.noiseBandwidth;
+  if (loop.method === 'exact') return result.noiseBandwidth.exact as number;
+  const perOmega = bandwidthOverOmega(loop.order, stage.damping ?? 1);
+  return (2 * Math.PI * (stage.naturalFrequencyHz as number) * perOmega) / plan.signal.symbolRateBd;
 }

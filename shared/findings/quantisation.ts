@@ -6,7 +6,7 @@ import { dominantDamping } from '../loop/dominant-pair';
 import { linearLoop } from '../loop/linear-loop';
 import { noiseBandwidth } from '../loop/noise-bandwidth';
 import { averagedSymbols } from '../loop/stage-loop';
-import { finding, passed, remedyUnless, say, setTo } from './finding';
+import { finding, followedBy, passed, remedyUnless, say, setTo } from './finding';
 import type { Remedy, Severity } from './finding';
 import { numberOf, pointerOf, stageName, stageViews, worstStage } from './loop-view';
 import type { LoopView, StageView } from './loop-view';
@@ -72,26 +72,25 @@ function error(view: LoopView, check: ErrorCheck): Finding[] {
   ];
 }
 
-/** The fewest mantissa bits with which every stage keeps both limits; for other gain forms, the multiplier. */
+/** A multiplier with the fewest mantissa bits with which every stage keeps both limits. */
 export function finerWords(view: LoopView): Remedy | null {
   const { gainForm, mantissaBits } = view.loop.arithmetic;
-  if (gainForm !== 'multiplier') {
-    return setTo(
-      numberOf(view, 'arithmetic/gainForm'),
-      pointerOf(view, 'arithmetic/gainForm'),
-      'multiplier',
-      'multiplier',
-    );
+  const set = (path: string, value: string | number, text: string): Remedy =>
+    setTo(numberOf(view, path), pointerOf(view, path), value, text);
+  if (gainForm === 'multiplier') {
+    const bits = fewestBits(view, mantissaBits + 1);
+    return bits === null ? null : set('arithmetic/mantissaBits', bits, `${bits} bits`);
   }
-  for (let bits = mantissaBits + 1; bits <= mostMantissaBits; bits += 1) {
-    if (stageViews(view).every((at) => keepsLimits(at, bits))) {
-      return setTo(
-        numberOf(view, 'arithmetic/mantissaBits'),
-        pointerOf(view, 'arithmetic/mantissaBits'),
-        bits,
-        `${bits} bits`,
-      );
-    }
+  const multiplier = set('arithmetic/gainForm', 'multiplier', 'multiplier');
+  const bits = fewestBits(view, mantissaBits) ?? mantissaBits;
+  return bits === mantissaBits
+    ? multiplier
+    : followedBy(multiplier, `${numberOf(view, 'arithmetic/mantissaBits')} to ${bits} bits`);
+}
+
+function fewestBits(view: LoopView, from: number): number | null {
+  for (let bits = from; bits <= mostMantissaBits; bits += 1) {
+    if (stageViews(view).every((at) => keepsLimits(at, bits))) return bits;
   }
   return null;
 }

@@ -14,32 +14,63 @@ const quietShare = 0.1;
 export function resolutionFindings(view: LoopView): Finding[] {
   if (view.loop.order < 2) return [];
   const at = lastStage(view);
-  const band = integralDeadBands(view.design.words)[at.index] as DeadBand;
-  const reach = Math.max(-band.least, band.most);
-  const value = reach * lsbOfOffset(view);
+  const standing = standingError(view, reachAt(view, at));
   const limit = view.key === 'carrier' ? view.plan.limits.phaseJitterDeg : view.plan.limits.timingJitterSymbols;
-  const stuck = reach >= 2 ** (view.loop.arithmetic.errorBits - 1) - 1;
-  const severity: Severity =
-    stuck || value > limit ? 'fail' : value > quietShare * limit && !isDithered(view, reach) ? 'caution' : 'pass';
+  const { value, reach } = standing;
+  const severity = severityOf(standing, limit);
   return [
     finding({
       slug: 'resolution.integrator-dead-band',
       severity,
-      title: passed(
-        severity,
-        `${view.title}: the integrator sees small errors`,
-        stuck ? `${view.title}: the integrator never moves` : `${view.title}: small errors never integrate`,
-      ),
+      title: passed(severity, `${view.title}: the integrator sees small errors`, titleOf(view, standing)),
       value,
       limit,
       sense: 'max',
       unit: view.key === 'carrier' ? '°' : 'symbols',
-      reason: reasonOf(view, { at, value, reach, stuck }),
+      reason: reasonOf(at, standing),
       ...remedyUnless(severity, () => moreGuardBits(view, reach)),
       fields: [pointerOf(view, 'arithmetic/guardBits'), pointerOf(view, 'arithmetic/errorBits')],
       source: 'dead band of the rounding, exact',
     }),
   ];
+}
+
+function severityOf({ cause, value }: Standing, limit: number): Severity {
+  if (cause === 'stuck') return 'fail';
+  if (value <= quietShare * limit) return 'pass';
+  return value > limit ? 'fail' : 'caution';
+}
+
+/** What the rounding of the increments leaves of an error. */
+interface Standing {
+  /** Largest error word that moves nothing; beyond the error word itself where none does. */
+  reach: number;
+  /** The same, degrees or symbols. */
+  band: number;
+  /** Error that stands, likewise. */
+  value: number;
+  /** `stuck`: no error moves the integrator · `carried`: noise carries small errors over · `pull`: floor rounds them all down. */
+  cause: 'stuck' | 'carried' | 'pull' | 'band';
+}
+
+/** Noise that is larger than the band averages it out; with floor half of the band is left, the pull of half an LSB. */
+function standingError(view: LoopView, reach: number): Standing {
+  const { errorBits, rounding } = view.loop.arithmetic;
+  const largest = 2 ** (errorBits - 1);
+  const band = Math.min(reach, largest) * lsbOfOffset(view);
+  if (reach >= largest - 1) return { reach, band, value: band, cause: 'stuck' };
+  if (!isDithered(view, reach)) return { reach, band, value: band, cause: 'band' };
+  return rounding === 'floor'
+    ? { reach, band, value: band / 2, cause: 'pull' }
+    : { reach, band, value: 0, cause: 'carried' };
+}
+
+/** Largest error word that leaves the integrator where it is, as if the error word had no end. */
+function reachAt({ design: { words } }: LoopView, { index }: StageView): number {
+  const isNone = words.stages[index]?.integral.mantissa === 0;
+  const bands = integralDeadBands(isNone ? words : { ...words, errorBits: 64 });
+  const { least, most } = bands[index] as DeadBand;
+  return Math.max(-least, most);
 }
 
 /** One error LSB as degrees or symbols at lock. */
@@ -53,15 +84,26 @@ function isDithered({ loop, design: { detector } }: LoopView, reach: number): bo
   return detector.variance !== null && Math.sqrt(detector.variance) > reach * errorLsb(loop.arithmetic);
 }
 
-function reasonOf(
-  view: LoopView,
-  { at, value, reach, stuck }: { at: StageView; value: number; reach: number; stuck: boolean },
-): string {
-  if (reach === 0) return `${stageName(at)} moves its integrator for every error but 0.`;
-  const amount = view.key === 'carrier' ? `${say(value)}°` : `${say(value)} symbols`;
-  if (stuck)
-    return `${stageName(at)} rounds every increment to 0: the loop has silently lost its integrator and keeps a standing error.`;
-  return `${stageName(at)} rounds increments of up to ${amount} to 0. An error that small stands for ever unless noise carries it over.`;
+function titleOf({ title }: LoopView, { cause }: Standing): string {
+  if (cause === 'stuck') return `${title}: the integrator never moves`;
+  return cause === 'pull' ? `${title}: rounding pulls the integrator` : `${title}: small errors never integrate`;
+}
+
+function reasonOf(at: StageView, { cause, reach, band, value }: Standing): string {
+  const name = stageName(at);
+  const amount = (of: number): string => (at.key === 'carrier' ? `${say(of)}°` : `${say(of)} symbols`);
+  const rounded = at.loop.arithmetic.rounding === 'floor' ? '0 or −1' : '0';
+  if (reach === 0) return `${name} moves its integrator for every error but 0.`;
+  switch (cause) {
+    case 'stuck':
+      return `${name} rounds every increment to ${rounded}: the loop has silently lost its integrator and keeps a standing error.`;
+    case 'pull':
+      return `${name} rounds its increments down, half an LSB on average: a standing error of ${amount(value)} makes up for it.`;
+    case 'carried':
+      return `${name} rounds increments of up to ${amount(band)} to 0; its noise is larger and carries them over.`;
+    case 'band':
+      return `${name} rounds increments of up to ${amount(band)} to 0. An error that small stands for ever unless noise carries it over.`;
+  }
 }
 
 /** Each guard bit halves the dead band; the integrator must keep the range that it needs. */

@@ -75,7 +75,7 @@ function integratorNode({ words, offsetPpm, samplesPerSymbol }: ClockHeadroomInp
   return nodeOf(
     'integrator',
     { stage: null, widthBits, guardBits },
-    { ...extremes, signal: `clock error of ${offsetPpm} ppm` },
+    { ...extremes, signal: `clock error of ${Number(offsetPpm.toPrecision(6))} ppm` },
   );
 }
 

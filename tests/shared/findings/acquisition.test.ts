@@ -52,6 +52,20 @@ describe('acquisition.integrator-range', () => {
     expect(finding.change!.pointer).toBe('/carrier/arithmetic/integratorBits');
     expect(afterRemedy(finding, parts).severity).toBe('pass');
   });
+
+  // By hand: 30 bits with 8 of guard hold 2^21·27.5e6/2^32 Hz = 13.4 kHz; three bits more hold 107 kHz.
+  it('widens the word before the limit where both are short', () => {
+    const arithmetic = { integratorBits: 30, integratorLimitHz: 70e3 };
+    const finding = carrierFinding('acquisition.integrator-range', { carrier: { arithmetic } });
+    expect(finding).toMatchObject({
+      change: { value: 33 },
+      remedy: 'Set 2.14 to 33 bits, then 2.18 to ±86 kHz.',
+    });
+    const wider = { carrier: { arithmetic: { ...arithmetic, integratorBits: 33 } } };
+    const next = carrierFinding('acquisition.integrator-range', wider);
+    expect(next.change!.label).toBe('Set 2.18 to ±86 kHz');
+    expect(afterRemedy(next, wider).severity).toBe('pass');
+  });
 });
 
 describe('acquisition.pull-in', () => {
@@ -69,6 +83,21 @@ describe('acquisition.pull-in', () => {
     expect(finding.reason).toContain('5.6');
     expect(finding.change!.pointer).toBe('/carrier/stages/0/noiseBandwidth');
     expect(afterRemedy(finding, parts).severity).toBe('pass');
+  });
+
+  // With ζ = 2, four symbols an update and one update of delay no gains reach BnT 0.0205.
+  it('does not type a bandwidth that no gains make with the delay', () => {
+    const stages = [{ name: 'acquire', damping: 2, noiseBandwidth: 0.0006 }];
+    const finding = carrierFinding('acquisition.pull-in', {
+      environment: { carrierTolerancePpm: 150 },
+      carrier: { updateInterval: 4, delay: 1, method: 'exact', stages },
+      limits: { acquisitionSymbols: 6000 },
+    });
+    expect(finding).toMatchObject({
+      severity: 'caution',
+      change: null,
+      remedy: 'Replay the range of offsets, or allow more symbols.',
+    });
   });
 
   it('does not type a bandwidth that the delay forbids', () => {

@@ -21,6 +21,20 @@ describe('clock.ppm-range', () => {
     expect(finding.change!.pointer).toBe('/clock/arithmetic/integratorBits');
     expect(afterRemedy(finding, parts).severity).toBe('pass');
   });
+
+  // By hand: 20 bits with 8 of guard hold 2^11/2^31, a millionth: 1 ppm, whatever the limit says.
+  it('widens the word before the limit where both are short', () => {
+    const arithmetic = { integratorBits: 20, integratorLimitPpm: 30 };
+    const finding = clockFinding('clock.ppm-range', { clock: { arithmetic } });
+    expect(finding).toMatchObject({
+      change: { value: 26, label: 'Set 3.14 to 26 bits' },
+      remedy: 'Set 3.14 to 26 bits, then 3.18 to ±44 ppm.',
+    });
+    const wider = { clock: { arithmetic: { ...arithmetic, integratorBits: 26 } } };
+    const next = clockFinding('clock.ppm-range', wider);
+    expect(next.change!.label).toBe('Set 3.18 to ±44 ppm');
+    expect(afterRemedy(next, wider).severity).toBe('pass');
+  });
 });
 
 describe('clock.slope', () => {

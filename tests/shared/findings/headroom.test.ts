@@ -64,6 +64,27 @@ describe('headroom', () => {
     expect(afterRemedy(carrierFinding('headroom.integrator', parts), parts).severity).toBe('pass');
   });
 
+  it('widens one with a limit as well, since the limit is no wider than the word', () => {
+    const parts = { carrier: { arithmetic: { integratorBits: 30, integratorLimitHz: 250e3 } } };
+    const finding = carrierFinding('headroom.integrator', parts);
+    expect(finding).toMatchObject({ severity: 'fail', change: { pointer: '/carrier/arithmetic/integratorBits' } });
+    expect(afterRemedy(finding, parts).severity).toBe('pass');
+  });
+
+  // By hand: an error of ±64 at g1 0.0315 and Kd 0.34 steps by 0.0315·64/(0.34·2) = 2.9 cycles, where ±½ fit.
+  it.each([
+    ['saturate', 'caution'],
+    ['wrap', 'fail'],
+  ])('takes a full-scale error that would %s for a %s, as no signal need ever make it', (overflow, severity) => {
+    const clock = {
+      stages: [{ name: 'track', noiseBandwidth: 0.012 }],
+      arithmetic: { errorFullScaleLog2: 6, overflow },
+    };
+    const finding = clockFinding('headroom.proportional', { signal: { rollOff: 0.1 }, clock });
+    expect(finding.severity).toBe(severity);
+    expect(finding.remedy).toBe('Lower 3.7, or the scale of the error (3.11).');
+  });
+
   // 10^6 ppm of 2^31 counter LSB per sample with 8 guard bits needs 39 bits and a sign.
   it('knows the integrator of the clock', () => {
     const parts = { environment: { clockTolerancePpm: 20 }, clock: { arithmetic: { integratorBits: 20 } } };

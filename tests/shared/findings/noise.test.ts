@@ -30,6 +30,38 @@ describe('noise.phase-total', () => {
     });
   });
 
+  // Without a mask jitter goes with √BnT: the limit asks for (limit/total)² of it, and a little less for two digits.
+  it.each([{ noiseBandwidth: 0.05 }, { naturalFrequencyHz: 400_000 }])(
+    'types a narrower loop where noise alone makes it, for %j',
+    (bandwidth) => {
+      const parts = {
+        carrier: { delay: 0, stages: [{ name: 'track', ...bandwidth }] },
+        environment: { phaseNoise: undefined },
+      };
+      const finding = carrierFinding('noise.phase-total', parts);
+      expect(finding.severity).toBe('fail');
+      const again = afterRemedy(finding, parts);
+      expect(again.severity).toBe('pass');
+      expect(again.value).toBeGreaterThan(0.9 * 3);
+    },
+  );
+
+  it('types the best natural frequency where that is what the stage asks for', () => {
+    const parts = { carrier: { stages: [{ name: 'track', naturalFrequencyHz: 7000 }] } };
+    const finding = carrierFinding('noise.phase-total', parts);
+    expect(finding.change!.pointer).toBe('/carrier/stages/0/naturalFrequencyHz');
+    expect(afterRemedy(finding, parts).severity).toBe('pass');
+  });
+
+  it('says so where no bandwidth keeps the limit', () => {
+    const limits = { phaseJitterDeg: 1.5 };
+    const wide = { carrier: { stages: stages(0.02) }, limits };
+    const finding = carrierFinding('noise.phase-total', wide);
+    expect(finding.remedy).toContain(', then raise 1.5');
+    expect(afterRemedy(finding, wide)).toMatchObject({ severity: 'fail', change: null });
+    expect(afterRemedy(finding, wide).remedy).toContain('No bandwidth keeps the limit');
+  });
+
   it('says nothing of a detector whose errors are coloured', () => {
     expect(findingsAbout('noise.phase-total', { carrier: undefined })).toEqual([]);
   });

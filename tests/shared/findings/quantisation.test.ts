@@ -28,6 +28,15 @@ describe('quantisation.bandwidth and quantisation.damping', () => {
     });
     expect(afterRemedy(finding, parts).severity).toBe('pass');
   });
+
+  it('say how many bits the multiplier then needs', () => {
+    const arithmetic = { gainForm: 'shift', mantissaBits: 3 };
+    const finding = carrierFinding('quantisation.damping', { carrier: { arithmetic } });
+    const bits = Number(/^Set 2\.12 to multiplier, then 2\.13 to (\d+) bits\.$/.exec(finding.remedy!)?.[1]);
+    const enough = { gainForm: 'multiplier', mantissaBits: bits };
+    expect(carrierFinding('quantisation.damping', { carrier: { arithmetic: enough } }).severity).toBe('pass');
+    expect(carrierFinding('quantisation.bandwidth', { carrier: { arithmetic: enough } }).severity).toBe('pass');
+  });
 });
 
 describe('quantisation.gain-vanishes', () => {

@@ -116,6 +116,14 @@ describe('FindingList', () => {
     expect(fetched).not.toHaveBeenCalled();
     vi.unstubAllGlobals();
   });
+
+  it('says beside the button what is left to do after it', () => {
+    const arithmetic = { integratorLimitHz: 70e3, integratorBits: 30 };
+    const narrow = withValue(examplePlan('corvid-c2'), '/carrier/arithmetic', arithmetic);
+    const [short] = design(narrow).findings.filter(({ slug }) => slug === 'acquisition.integrator-range');
+    on(FindingList, { findings: [short], stale: undefined }, narrow);
+    expect(wrapper.get('.do').text()).toBe('Set 2.14 to 33 bitsthen 2.18 to ±86 kHz.');
+  });
 });
 
 describe('ConflictPanel', () => {
