@@ -83,6 +83,30 @@ describe('workOut of the satellite link', () => {
     expect(margins.gainDown).toBeNull();
   });
 
+  // Poles nearest to z = 1 through s = 2(z − 1)/(z + 1); |H| searched on four million frequencies; the step run.
+  it.each([
+    [0, 86177.76712524201, 2.3372633858147203, 185487.04367109502, 251, 0.22970229244694296],
+    [1, 33560.43504238398, 2.183000385919406, 70270.44120287555, 641, 0.21599899514121756],
+  ])('has the frequencies and the step of stage %i', (i, natural, peaking, bandwidth, settling, overshoot) => {
+    const stage = stagesOf(design)[i]!;
+    near(stage.naturalFrequencyHz.exact, natural, 1e-9);
+    near(stage.peakingDb, peaking, 1e-9);
+    near(stage.bandwidth3DbHz, bandwidth, 1e-9);
+    expect(stage.settlingUpdates).toBe(settling);
+    near(stage.overshoot, overshoot, 1e-12);
+  });
+
+  // From the words: g1 = 1582·2^3·2^10·Kd·K0, g2 = 1350·2^5·2^(10 − 8)·Kd·K0, and so on, through the same programs.
+  it.each([
+    [0, 59.69508763832343, 86180.17667128929, 0.7070812474242454 / 0.7070761282348267 - 1],
+    [1, 63.19184630880693, 33562.626380585454, 0.7072194620292431 / 0.7071051181647999 - 1],
+  ])('has what the words make of stage %i', (i, margin, natural, dampingError) => {
+    const stage = stagesOf(design)[i]!;
+    near(stage.effectivePhaseDeg, margin, 1e-9);
+    near(stage.naturalFrequencyHz.effective, natural, 1e-9);
+    expect(stage.dampingError).toBeCloseTo(dampingError, 9);
+  });
+
   it('has the jitter of both stages, and the bandwidth with the least', () => {
     const { stages, best } = design.carrier!.budget!;
     near(stages[0]!.thermal, 1.9425913057143722, 1e-8);
@@ -102,6 +126,7 @@ describe('workOut of the satellite link', () => {
       integral: { mantissa: 1766, shift: -2 },
     });
     near(track.noiseBandwidth.exact, 0.0005025647431486491, 1e-9);
+    near(design.clock!.resolutionHz, (2 * 27.5e6) / 2 ** 32, 1e-12); // two steps a symbol, one LSB of 32 bits
     expect(track.words).toEqual({
       proportional: { mantissa: 1296, shift: -1 },
       integral: { mantissa: 1770, shift: 2 },
