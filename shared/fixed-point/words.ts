@@ -1,5 +1,7 @@
 import type { CarrierWords, ClockWords, OverflowByNode, StageGainWords } from '../model/words';
 import { ParameterError, requirePositive } from '../parameter-error';
+import { detectorLsbLog2 } from './datapath/phase-detector';
+import { timingLsbLog2 } from './datapath/timing-detector';
 import { exactRatio, floorOf, nearestOf, product, quotient, type Ratio } from './exact-ratio';
 import { toStored, wrapUnsigned } from './format';
 import { gainWord } from './gain-words';
@@ -38,7 +40,7 @@ export function carrierWords({ signal, carrier, detectorGain, stages }: CarrierW
   }
   const clockHz = product(exactRatio(nco.stepsPerSymbol), exactRatio(signal.symbolRateBd));
   const perUnit = carrierOscillatorGain({ ...shared, nco }) * detectorGain;
-  return {
+  const words: CarrierWords = {
     loop: 'carrier',
     ...detectorWords(detector, signal),
     ...shared,
@@ -52,6 +54,8 @@ export function carrierWords({ signal, carrier, detectorGain, stages }: CarrierW
       fcw: toStored(frequencyWord(exactRatio(nco.centreHz), clockHz, nco.widthBits)),
     },
   };
+  requireErrorShift('/carrier', words, detectorLsbLog2(words));
+  return words;
 }
 
 /**
@@ -69,7 +73,7 @@ export function clockWords({ signal, clock, detectorGain, stages }: ClockWordsIn
   const samples = exactRatio(signal.samplesPerSymbol);
   const step = nearestOf(quotient(exactRatio(2 ** counter.widthBits), samples));
   const scale = { ...shared, counter, hold: clock.hold };
-  return {
+  const words: ClockWords = {
     loop: 'clock',
     detector: clock.detector,
     interpolator: clock.interpolator,
@@ -82,6 +86,8 @@ export function clockWords({ signal, clock, detectorGain, stages }: ClockWordsIn
     ),
     counter: { widthBits: counter.widthBits, fractionBits: counter.fractionBits, nominalStep: toStored(step) },
   };
+  requireErrorShift('/clock', words, timingLsbLog2(words));
+  return words;
 }
 
 /** Frequency control word f0·2^W/fn to nearest, a half up, modulo 2^W. */
@@ -113,6 +119,16 @@ function commonWords(pointer: string, signal: WordSignal, loop: WordLoop) {
 function requireGuard(pointer: string, guardBits: number, widthBits: number): void {
   if (guardBits < widthBits) return;
   throw new ParameterError(pointer, `the guard bits must be fewer than the ${widthBits} bits of their integrator`);
+}
+
+/** No shift of the datapath is longer than 63, so that 64-bit arithmetic can do it. */
+function requireErrorShift(pointer: string, { errorFullScaleLog2, errorBits }: CarrierWords | ClockWords, lsb: number) {
+  const shift = errorFullScaleLog2 - (errorBits - 1) - lsb;
+  if (Math.abs(shift) <= 63) return;
+  throw new ParameterError(
+    `${pointer}/arithmetic/errorFullScaleLog2`,
+    `the detector value would be shifted by ${Math.abs(shift)} bits to the error word, at most 63 can be`,
+  );
 }
 
 function detectorWords(detector: CarrierWords['detector'], signal: WordSignal) {

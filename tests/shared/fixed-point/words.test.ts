@@ -95,6 +95,19 @@ describe('carrierWords', () => {
     const input = { ...qpskLink, carrier: { ...carrier, ...change } };
     expect(() => carrierWords(input)).toThrow(expect.objectContaining({ parameter }));
   });
+
+  // By hand: a sample LSB of 2^−43 and an error LSB of 2^(k − 1) lie k + 42 bits apart; rs(x, s) ends at s = ±63.
+  it.each([
+    [21, true],
+    [22, false],
+    [-32, true],
+  ])('with an error scale of 2^%i can shift the detector value: %s', (errorFullScaleLog2, can) => {
+    const signal = { ...qpskLink.signal, sampleBits: 12, sampleFullScaleLog2: -32 };
+    const arithmetic = { ...carrier.arithmetic, errorBits: 2, errorFullScaleLog2 };
+    const make = () => carrierWords({ ...qpskLink, signal, carrier: { ...carrier, arithmetic } });
+    if (can) expect(make().errorFullScaleLog2).toBe(errorFullScaleLog2);
+    else expect(make).toThrow(expect.objectContaining({ parameter: '/carrier/arithmetic/errorFullScaleLog2' }));
+  });
 });
 
 describe('clockWords', () => {
@@ -113,6 +126,17 @@ describe('clockWords', () => {
     });
     expect(clockWords(limited(true)).integratorLimit).toBe(879609302);
     expect(clockWords(limited(false)).integratorLimit).toBe(1759218604);
+  });
+
+  // By hand: the Gardner detector multiplies two samples, an LSB of 2^−42 here; 2^(22 − 1) is 63 bits above it.
+  it('points at an error scale that the detector value cannot be shifted to', () => {
+    const signal = { ...gardnerLink.signal, sampleBits: 12, sampleFullScaleLog2: -10 };
+    const scaled = (errorFullScaleLog2: number) => {
+      const arithmetic = { ...gardnerLink.clock.arithmetic, errorBits: 2, errorFullScaleLog2 };
+      return () => clockWords({ ...gardnerLink, signal, clock: { ...gardnerLink.clock, arithmetic } });
+    };
+    expect(scaled(22)().errorFullScaleLog2).toBe(22);
+    expect(scaled(23)).toThrow(expect.objectContaining({ parameter: '/clock/arithmetic/errorFullScaleLog2' }));
   });
 
   it('keeps the lock threshold in 1/256, rounded down', () => {
