@@ -1,4 +1,4 @@
-import type { CarrierNodes } from '../fixed-point/datapath/carrier-block';
+import type { CarrierNodes } from '../fixed-point/datapath/carrier-nodes';
 
 /** Running 64-bit checksum over z, e, acc, acc2, w and phase of every symbol, in two lanes of 32 bits. */
 export class NodeChecksum {

@@ -1,4 +1,5 @@
-import { carrierNodes, carrierRunner, type CarrierNodes } from '../fixed-point/datapath/carrier-block';
+import { carrierRunner } from '../fixed-point/datapath/carrier-runner';
+import { carrierNodes, type CarrierNodes } from '../fixed-point/datapath/carrier-nodes';
 import { toNumber } from '../fixed-point/format';
 import { symmetry, type Modulation } from '../fixed-point/symmetry';
 import { channel } from './channel';

@@ -2,7 +2,7 @@ import type { CarrierWords } from '../../model/words';
 import { toNumber } from '../format';
 import { wholeCircle } from '../rotator-table';
 import type { CarrierTables } from '../tables';
-import type { CarrierRunner } from './carrier-block';
+import type { CarrierRunner } from './carrier-nodes';
 import { beyond, evenUnit, roundingHalf, toEven } from './double-arithmetic';
 import { gainInDoubles } from './gain-doubles';
 import { lockInDoubles } from './lock-doubles';

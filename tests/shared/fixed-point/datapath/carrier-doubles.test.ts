@@ -1,11 +1,8 @@
 import fc from 'fast-check';
 import { describe, expect, it, vi } from 'vitest';
-import {
-  carrierInIntegers,
-  carrierNodes,
-  type CarrierRunner,
-} from '../../../../shared/fixed-point/datapath/carrier-block';
 import { carrierInDoubles } from '../../../../shared/fixed-point/datapath/carrier-doubles';
+import { carrierNodes, type CarrierRunner } from '../../../../shared/fixed-point/datapath/carrier-nodes';
+import { carrierInIntegers } from '../../../../shared/fixed-point/datapath/carrier-runner';
 import { fitsDoubles } from '../../../../shared/fixed-point/datapath/fits-doubles';
 import { carrierTables } from '../../../../shared/fixed-point/tables';
 import type { CarrierWords } from '../../../../shared/model/words';
