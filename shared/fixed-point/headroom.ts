@@ -102,11 +102,13 @@ function incrementNode(input: HeadroomInput, { integral }: StageGainWords, stage
   });
 }
 
-/** The integrator's range is its limit where it has one. */
+/** What an integrator spans: its limit where it has one, else its word. */
+const integratorRange = ({ integratorLimit, integratorBits }: CarrierWords): number =>
+  integratorLimit === null ? 2 ** (integratorBits - 1) : toNumber(integratorLimit);
+
 function integratorNode({ words, symbolRateBd, largestOffsetHz }: HeadroomInput): HeadroomNode {
   const lsbHz = frequencyResolutionHz(words, symbolRateBd) * 2 ** -words.guardBits;
-  const full = 2 ** (words.integratorBits - 1);
-  const range = words.integratorLimit === null ? full : toNumber(words.integratorLimit);
+  const range = integratorRange(words);
   const largest = Math.max(
     ...words.stages.map(({ integral }) => Math.abs(gainOf(integral)) * 2 ** (words.errorBits - 1)),
   );
@@ -124,7 +126,7 @@ function frequencyNode(input: HeadroomInput, proportional: HeadroomNode[], held:
   const { words, symbolRateBd } = input;
   const centre = Number(BigInt.asIntN(words.nco.widthBits, toBigInt(words.nco.fcw)));
   const largest = (bits: 'reachedBits' | 'worstBits') => Math.max(...proportional.map((each) => 2 ** each[bits]));
-  const holdable = words.order === 1 ? 0 : 2 ** (words.integratorBits - 1 - words.guardBits);
+  const holdable = words.order === 1 ? 0 : integratorRange(words) * 2 ** -words.guardBits;
   return node('frequency-word', words.nco.widthBits, {
     reached: Math.abs(centre) + held + largest('reachedBits'),
     worst: Math.abs(centre) + holdable + largest('worstBits'),

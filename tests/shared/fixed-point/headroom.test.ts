@@ -62,6 +62,15 @@ describe('carrierHeadroom', () => {
     expect(nodeOf('integrator', { words: limited, largestOffsetHz: 155000 }).headroomBits).toBeCloseTo(-1, 6);
   });
 
+  // By hand: 77.5 kHz is 77500/27.5e6·2^32 = 12104003 NCO LSB, and what the proportional path adds at most.
+  it('lets the limit bound the frequency word', () => {
+    const limited = { ...words, integratorLimit: Math.floor((77500 / 27.5e6) * 2 ** 44) };
+    const [free, bounded] = [words, limited].map((of) => 2 ** nodeOf('frequency-word', { words: of }).worstBits);
+    const proportional = 2 ** nodeOf('proportional').worstBits;
+    expect((free! - proportional) / 2 ** 31).toBeCloseTo(1, 9);
+    expect((bounded! - proportional) / 12_104_003).toBeCloseTo(1, 6);
+  });
+
   it('names the stage of each gain', () => {
     expect(nodeOf('proportional').stage).toBe('acquire');
     expect(nodeOf('sample').stage).toBeNull();
