@@ -14,11 +14,20 @@ export type TargetAnswer = Omit<TargetSummary, 'id'> & Pick<Target, 'registerMap
 const withoutId = ({ id: _id, ...rest }: TargetSummary): Omit<TargetSummary, 'id'> => rest;
 
 /** A map that contradicts itself would give a header that does; what is only doubtful passes. */
-function requireSoundMap({ registerMap }: TargetBody): void {
-  const failing = mapFindings(registerMap).filter(({ severity }) => severity === 'fail');
+function requireSoundMap({ registerMap, baseAddress }: TargetBody): void {
+  const failing = mapFindings(registerMap, baseAddress).filter(({ severity }) => severity === 'fail');
   if (failing.length === 0) return;
-  throw invalid(failing.map(({ fields, reason }) => ({ pointer: `/registerMap${fields[0] ?? ''}`, detail: reason })));
+  throw invalid(
+    failing.map(({ slug, fields, reason }) => ({
+      pointer: slug === 'map.address' ? '/baseAddress' : `/registerMap${fields[0] ?? ''}`,
+      detail: reason,
+    })),
+  );
 }
+
+/** The registers and where they lie: what a header's map number stands for. */
+const mapOf = ({ registerMap, baseAddress }: Pick<TargetBody, 'registerMap' | 'baseAddress'>): string =>
+  canonicalJson({ registerMap, baseAddress });
 
 export function targetsService({ db, clock }: Context) {
   async function get(slug: string): Promise<TargetAnswer> {
@@ -43,15 +52,14 @@ export function targetsService({ db, clock }: Context) {
       });
       return get(target.slug);
     },
-    /** A changed register map gets the next map number; saved revisions keep the map that they were saved with. */
+    /** A changed register map or base address gets the next map number; saved revisions keep the map that they were saved with. */
     async update(slug: string, version: number, target: TargetBody, by: SignedIn): Promise<TargetAnswer> {
       requireSoundMap(target);
       await inTransaction(db, async (trx) => {
         const { audit, targets } = repositories(trx);
         const stored = await targets.find(slug);
         if (!stored) throw notFound('target');
-        const sameMap = canonicalJson(stored.registerMap) === canonicalJson(target.registerMap);
-        const mapNumber = stored.mapNumber + (sameMap ? 0 : 1);
+        const mapNumber = stored.mapNumber + (mapOf(stored) === mapOf(target) ? 0 : 1);
         if (!(await targets.update(stored.id, version, target, mapNumber, clock()))) throw stale('target');
         const detail = { mapNumber };
         await audit.append({ at: clock(), personId: by.id, action: 'target.change', subject: target.slug, detail });

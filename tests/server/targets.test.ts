@@ -40,6 +40,8 @@ describe('a target', () => {
       .expect(200)
       .expect('ETag', '"3"');
     expect(remapped.body).toMatchObject({ mapNumber: 2, version: 3 });
+    const moved = await put({ ...target, registerMap, baseAddress: '0x50000000' }, 3).expect(200);
+    expect(moved.body).toMatchObject({ mapNumber: 3, version: 4 });
   });
 
   it('is not changed over a version that is not the stored one', async () => {
@@ -58,6 +60,14 @@ describe('a target', () => {
       .post('/targets', { ...target, slug: 'other', registerMap })
       .expect(422);
     expect(body.faults[0].pointer).toMatch(/^\/registerMap\/registers\/0\/fields\/[01]/);
+  });
+
+  it('is not made with registers off their boundary; the fault points at the base address', async () => {
+    const { body } = await server
+      .as('engineer')
+      .post('/targets', { ...target, slug: 'other', baseAddress: '0x40010002' })
+      .expect(422);
+    expect(body.faults).toMatchObject([{ pointer: '/baseAddress' }]);
   });
 
   it('is not there under another name', async () => {
