@@ -23,7 +23,7 @@ export interface ToleranceCheck {
    */
   symbols?: number;
   /**
-   * Trials of a point.
+   * Trials of a point; with the other defaults 368 are the fewest that can pass.
    */
   trials?: number;
   /**

@@ -44,7 +44,7 @@ const replayable = ['bpsk', 'qpsk', '8psk', '16qam', '64qam'];
 
 /** Writes the evenly spaced offsets of a check out, from start to stop. */
 export function replayCheck(check: ToleranceCheck): ReplayCheck {
-  const { carrierOffsetHz, esN0Db = [10], symbols = 20000, trials = 100, seed = 1, limits } = check;
+  const { carrierOffsetHz, esN0Db = [10], symbols = 20000, trials = 400, seed = 1, limits } = check;
   const { lockProbability = 0.99, confidence = 0.95 } = limits ?? {};
   const offsetsHz = evenlySpaced(carrierOffsetHz);
   return { offsetsHz, esN0Db: [...esN0Db], symbols, trials, seed, limits: { lockProbability, confidence } };

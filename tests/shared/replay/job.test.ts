@@ -3,6 +3,7 @@ import { describe, expect, it } from 'vitest';
 import schema from '../../../schemas/tolerance-check.schema.json';
 import type { ToleranceCheck } from '../../../shared/model/tolerance-check';
 import { assertAffordable, assertReplayable, pointAt, pointCount, replayCheck } from '../../../shared/replay/job';
+import { leastTrials, type ProofLimits } from '../../../shared/replay/least-trials';
 import { qpskJob } from './link';
 
 const validate = new Ajv2020({ useDefaults: true }).compile(schema);
@@ -26,10 +27,19 @@ describe('tolerance-check.schema.json', () => {
       carrierOffsetHz: { start: -1000, stop: 1000, points: 21 },
       esN0Db: [10],
       symbols: 20000,
-      trials: 100,
+      trials: 400,
       seed: 1,
       limits: { lockProbability: 0.99, confidence: 0.95 },
     });
+  });
+
+  // Fewer trials than that leave a check undecided even where every one of them locks.
+  it('has trials enough by default to pass its own limits', () => {
+    const filled: Partial<ToleranceCheck> = { name: 'Short', carrierOffsetHz: { start: 0, stop: 1 } };
+    validate(filled);
+    const { trials, limits } = filled as Required<ToleranceCheck>;
+    expect(trials).toBeGreaterThanOrEqual(leastTrials(limits as ProofLimits));
+    expect(replayCheck({ name: 'Short', carrierOffsetHz: { start: 0, stop: 1 } }).trials).toBe(trials);
   });
 
   it.each([

@@ -96,6 +96,16 @@ describe('runPoint', () => {
     expect(new Set(checksums).size).toBe(6);
   });
 
+  it('holds every figure that it measures in its digest', () => {
+    const job = qpskJob({ check: { trials: 2, symbols: 500 } });
+    const point = runPoint(job, 0);
+    const content = (changed: object) => JSON.stringify(digestContent(job, '1.0.0', [{ ...point, ...changed }]));
+    const figures = ['locks', 'falseLocks', 'residualOffsetHz', 'phaseJitterDeg', 'phaseBiasDeg', 'cycleSlips'];
+    for (const figure of figures) expect(content({ [figure]: 7 }), figure).not.toBe(content({}));
+    expect(content({ lockTimeSymbols: { p50: 1, p95: 2 } })).not.toBe(content({}));
+    expect(content({ checksum: '0000000000000000' })).not.toBe(content({}));
+  });
+
   it('depends on the seed', () => {
     const [one, other] = [65, 66].map((seed) => runPoint(qpskJob({ check: { seed, trials: 2, symbols: 500 } }), 0));
     expect(one!.checksum).not.toBe(other!.checksum);
