@@ -3,6 +3,9 @@ import { quasar, transformAssetUrls } from '@quasar/vite-plugin';
 import vue from '@vitejs/plugin-vue';
 import { defineConfig } from 'vitest/config';
 
+// A test without an assertion cannot fail. Tests of the server assert through supertest too, which is not counted.
+const expect = { requireAssertions: true };
+
 const at = (path: string): string => fileURLToPath(new URL(path, import.meta.url));
 
 export default defineConfig({
@@ -11,6 +14,7 @@ export default defineConfig({
       {
         test: {
           name: 'shared',
+          expect,
           environment: 'node',
           include: ['tests/shared/**/*.test.ts', 'tests/scripts/**/*.test.ts'],
         },
@@ -19,7 +23,7 @@ export default defineConfig({
         plugins: [vue({ template: { transformAssetUrls } }), quasar({ autoImportComponentCase: 'kebab' })],
         // Under Vitest `quasar` would resolve to its server bundle.
         resolve: { alias: { quasar: at('./node_modules/quasar/dist/quasar.client.js'), src: at('./src') } },
-        test: { name: 'src', environment: 'happy-dom', include: ['tests/src/**/*.test.ts'] },
+        test: { name: 'src', expect, environment: 'happy-dom', include: ['tests/src/**/*.test.ts'] },
       },
       {
         test: {
