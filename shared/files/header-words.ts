@@ -1,11 +1,13 @@
 import type { Achieved, LoopDesign, StageDesign } from '../model/design';
+import type { Plan } from '../model/plan';
 import { wordName } from '../registers/c-names';
 import { percent, shortNumber } from '../registers/meaning';
 import { stageOf, type LoopName, type QuantityValue } from '../registers/quantities';
-import { cText } from './c-text';
+import { cText, wrapText } from './c-text';
 import { decimalConstant, defineBlock } from './c-constant';
 import type { FileInput } from './file-input';
 import { comment } from './header-head';
+import { howToRead } from './how-to-read';
 
 const shown = (value: number | null): string => (value === null ? 'none' : shortNumber(value));
 
@@ -28,11 +30,17 @@ const stageComment = (loop: LoopName, stage: StageDesign): string[] =>
     `  Phase margin, deg: ${shown(stage.margins.phaseDeg)} exact, ${shown(stage.effectivePhaseDeg)} from these words`,
   ]);
 
-const loopComment = (loop: LoopName, { updateRateHz, detector }: LoopDesign): string[] =>
+/** What the gains were worked out for: another amplitude or Es/N0 is another detector gain. */
+const signalText = ({ modulation, symbolRateBd, amplitude, esN0Db }: Plan['signal']): string =>
+  `  Signal: ${modulation}, ${shortNumber(symbolRateBd)} Bd, amplitude ${amplitude}, Es/N0 ${esN0Db} dB`;
+
+const loopComment = (loop: LoopName, { updateRateHz, detector, resolutionHz }: LoopDesign, plan: Plan): string[] =>
   comment([
     loopTitle[loop],
+    signalText(plan.signal),
     `  Updates per second: ${shortNumber(updateRateHz)}`,
     `  Detector gain Kd: ${shortNumber(detector.gain)} detector units per ${loop === 'carrier' ? 'rad' : 'symbol'}`,
+    `  One output LSB, Hz: ${shown(resolutionHz)} of ${loop === 'carrier' ? 'carrier frequency' : 'symbol rate'}`,
   ]);
 
 function wordMacros(prefix: string, quantities: readonly QuantityValue[]): string[] {
@@ -49,7 +57,7 @@ function loopLines(
   loop: LoopName,
   design: LoopDesign | undefined,
   quantities: QuantityValue[],
-  prefix: string,
+  { plan, target: { cPrefix: prefix } }: FileInput,
 ): string[] {
   if (!design) return [];
   const own = quantities.filter(({ path }) => path.startsWith(`${loop}.`));
@@ -62,15 +70,20 @@ function loopLines(
     '',
   ]);
   const rest = own.filter(({ path }) => stageOf(path) === undefined);
-  return [...stages, ...loopComment(loop, design), ...wordMacros(prefix, rest), ''];
+  return [...stages, ...loopComment(loop, design, plan), ...wordMacros(prefix, rest), ''];
 }
 
 /** Every word of the plan as a macro, whether or not a register holds it, with what it means. */
-export function words({ design, target }: FileInput, quantities: QuantityValue[]): string[] {
+export function words(input: FileInput, quantities: QuantityValue[]): string[] {
+  const { carrier, clock } = input.design;
   return [
-    '/* Words of the plan. A choice is given by its standard code; a register may use another. */',
+    ...comment([
+      'Words of the plan. A choice is given by its standard code; a register may use another.',
+      '',
+      ...howToRead.flatMap((text) => wrapText(text, 88)),
+    ]),
     '',
-    ...loopLines('carrier', design.carrier, quantities, target.cPrefix),
-    ...loopLines('clock', design.clock, quantities, target.cPrefix),
+    ...loopLines('carrier', carrier, quantities, input),
+    ...loopLines('clock', clock, quantities, input),
   ];
 }

@@ -8,6 +8,7 @@ import { configQuantity, configRegister } from './config-registers';
 import { wrapText } from './c-text';
 import { care, type FileInput, type TargetSnapshot } from './file-input';
 import { provenance } from './header-head';
+import { howToRead } from './how-to-read';
 import { stableOrder } from '../stable-order';
 
 const targetOf = ({ registerMap, mapNumber, slug, name, loopClockHz, cPrefix, baseAddress }: TargetSnapshot) => ({
@@ -54,6 +55,8 @@ export function configYaml(input: FileInput): string {
     'config.yaml: the words of one plan, the registers that hold them, and what they mean.',
     '',
     ...provenance(input).map(([label, text]) => `${label}: ${text}`),
+    '',
+    ...howToRead.flatMap((text) => wrapText(text, 96)),
     '',
     ...wrapText(care, 96),
   ].map(commentLine);

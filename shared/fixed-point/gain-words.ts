@@ -5,7 +5,7 @@ export type GainWord = SignedGainWord;
 export type GainForm = 'multiplier' | 'shift' | 'shift-add';
 
 export interface WantedGain {
-  /** Real gain, output LSB per error LSB, finite, either sign. */
+  /** Real gain, LSB of the node that it drives per error LSB, finite, either sign. */
   gain: number;
   /** How the hardware makes the gain. */
   form: GainForm;

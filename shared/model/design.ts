@@ -253,7 +253,7 @@ export interface StageWords {
 }
 
 /**
- * One gain word: its value is mantissa · 2^−shift output LSB per error LSB.
+ * One gain word: mantissa · 2^−shift LSB of the node that it drives per error LSB.
  */
 export interface GainWord {
   /**

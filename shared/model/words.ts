@@ -188,7 +188,7 @@ export interface StageGainWords {
 }
 
 /**
- * A gain mantissa · 2^−shift, output LSB per error LSB.
+ * A gain mantissa · 2^−shift, LSB of the node that it drives per error LSB.
  */
 export interface SignedGainWord {
   /**

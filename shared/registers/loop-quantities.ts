@@ -37,6 +37,11 @@ const updates: Definition<LoopSource>[] = [
 
 const arithmetic: Definition<LoopSource>[] = [
   number('sampleBits', 'Width of a sample', '//signal/sampleBits', ({ words }) => words.sampleBits),
+  {
+    ...number('sampleFullScaleLog2', 'log2 of the sample value at full scale', '', (s) => s.words.sampleFullScaleLog2),
+    signed: true,
+    pointer: '//signal/sampleFullScaleLog2',
+  },
   number('errorBits', 'Width of the error word', '/arithmetic/errorBits', ({ words }) => words.errorBits),
   {
     ...number(
@@ -154,6 +159,12 @@ export const carrierDefinitions: readonly Definition<LoopSource<CarrierWords>>[]
     read: ({ words }) => words.nco.phaseBits,
   },
   {
+    name: 'nco.tableBits',
+    label: 'Width of a rotator table entry',
+    pointer: '/nco/tableBits',
+    read: ({ words }) => words.tableBits,
+  },
+  {
     name: 'nco.stepsPerSymbol',
     label: 'NCO steps per symbol',
     pointer: '/nco/stepsPerSymbol',
@@ -212,6 +223,12 @@ export const clockDefinitions: readonly Definition<LoopSource<ClockWords>>[] = [
     label: 'Bits of the fractional interval',
     pointer: '/counter/fractionBits',
     read: ({ words }) => words.counter.fractionBits,
+  },
+  {
+    name: 'counter.tableBits',
+    label: 'Width of an interpolator coefficient',
+    pointer: '/counter/tableBits',
+    read: ({ words }) => words.tableBits,
   },
   {
     name: 'integratorLimit',

@@ -1,3 +1,4 @@
+import { gainOf } from '../fixed-point/gain-words';
 import type { SignedGainWord, StageGainWords } from '../model/words';
 import { type Gain, gainError, gainOfWord, percent, shortNumber } from './meaning';
 import type { Definition, LoopSource } from './quantity';
@@ -18,10 +19,22 @@ const title: Record<Gain, string> = {
 const leastOrder: Record<Gain, number> = { proportional: 1, integral: 2, integral2: 3 };
 
 function gainText(source: StageSource, gain: Gain, word: SignedGainWord): string {
+  if (source.words.order < leastOrder[gain]) return `0: unused in a loop of order ${source.words.order}`;
   const error = gainError(word, gain, source.loop.stages[source.index]?.gains[gain], source.words);
-  const text = `${shortNumber(gainOfWord(word, gain, source.words))} output LSB per error LSB`;
+  const text = scaleText(source, gain, word);
   return error === null ? text : `${text}, ${percent(error)} from the wanted gain`;
 }
+
+/** M·2^−s in LSB of the node that it drives, and what of it reaches the output. */
+function scaleText({ words }: StageSource, gain: Gain, word: SignedGainWord): string {
+  const output = `${shortNumber(gainOfWord(word, gain, words))} output LSB`;
+  if (gain === 'proportional') return `${output} per error LSB`;
+  const own = `${shortNumber(gainOf(word))} ${gain === 'integral' ? 'integrator' : 'second integrator'} LSB`;
+  return `${own} per error LSB, that is ${output}`;
+}
+
+/** A shift below 0 is easily taken for its magnitude. */
+const shiftText = (shift: number): string => (shift === 0 ? '' : shift > 0 ? `right by ${shift}` : `left by ${-shift}`);
 
 function gainDefinitions(gain: Gain): Definition<StageSource>[] {
   const required = ({ words }: StageSource) => words.order >= leastOrder[gain];
@@ -42,6 +55,7 @@ function gainDefinitions(gain: Gain): Definition<StageSource>[] {
       signed: true,
       pointer,
       read: (source) => wordsOf(source)[gain].shift,
+      meaning: (source) => shiftText(wordsOf(source)[gain].shift),
       required,
     },
   ];

@@ -168,6 +168,23 @@ describe('configHeader', () => {
     expect(configHeader(input({ plan: shuffled }))).toBe(configHeader(input()));
   });
 
+  // Directions and scales are those of the datapath: rs(d·M, s) shifts right, acc lies guard bits below the output,
+  // a leading input and an early strobe are positive, the counter steps by step0 − v.
+  it.each([
+    'Gain: mantissa * 2^-shift, the product rounded once; a shift above 0 goes to the right,',
+    'one below 0 to the left.',
+    'Output: proportional path + (integrator >> guard bits).',
+    'the input leads or the strobe is early.',
+    'Clock: the counter steps down by its nominal step - output, so a larger output strobes',
+    'Polarity: the signs of the mantissas carry it already; negate nothing twice.',
+  ])('tells firmware how to apply the words: %s', (line) => {
+    expect(configHeader(input())).toContain(` * ${line}\n`);
+  });
+
+  it('names the signal that the gains are for', () => {
+    expect(configHeader(input())).toContain(' *   Signal: QPSK, 27500000 Bd, amplitude 1, Es/N0 10 dB\n');
+  });
+
   it('warns of a stage that is unstable', () => {
     const [acquire, ...others] = design.carrier!.stages;
     const unstable = { ...design.carrier!, stages: [{ ...acquire!, stable: false }, ...others] };

@@ -134,7 +134,7 @@ export const design: Pick<Design, 'carrier' | 'clock'> = {
 export const plan: Plan = {
   name: 'Transponder 17, QPSK 27.5',
   target: 'corvid-c2',
-  signal: { modulation: 'QPSK', symbolRateBd: 27.5e6, samplesPerSymbol: 2, rollOff: 0.35, esN0Db: 10 },
+  signal: { amplitude: 1, modulation: 'QPSK', symbolRateBd: 27.5e6, samplesPerSymbol: 2, rollOff: 0.35, esN0Db: 10 },
   carrier: {
     detector: 'sign',
     polarity: 1,

@@ -88,6 +88,7 @@ describe('configDocument', () => {
     const head = configYaml(input()).split('---')[0]!;
     expect(head.split('\n').filter((line) => line !== '' && !line.startsWith('#'))).toEqual([]);
     expect(head).toContain('# Plan: Transponder 17, QPSK 27.5\n# Revision: 14\n# Release: none\n');
+    expect(head).toContain('\n# Polarity: the signs of the mantissas carry it already; negate nothing twice.\n');
   });
 });
 

@@ -58,12 +58,26 @@ describe('quantitiesOf', () => {
   });
 
   // The fixture's wanted gains are those of the acquire words exactly; track wants 0.25·2^−10 and has 1023·2^−12.
+  // By hand: 801·2^3 = 6408, and −547·2^6 = −35008 with 8 guard bits: −35008/2^8 = −136.75.
+  it('says which way a shift goes, and what a loop of this order leaves unused', () => {
+    expect(byPath.get('carrier.acquire.proportional.shift')?.meaning).toBe('left by 3');
+    expect(byPath.get('carrier.track.proportional.shift')?.meaning).toBe('right by 12');
+    expect(byPath.get('carrier.acquire.integral2.mantissa')?.meaning).toBe('0: unused in a loop of order 2');
+  });
+
+  it('gives the scales that turn a word into a quantity', () => {
+    for (const path of ['carrier.sampleFullScaleLog2', 'carrier.nco.tableBits', 'clock.counter.tableBits']) {
+      expect(byPath.has(path), path).toBe(true);
+      expect(isQuantity(path), path).toBe(true);
+    }
+  });
+
   it('gives the error of a gain word against the wanted gain', () => {
     expect(byPath.get('carrier.acquire.proportional.mantissa')?.meaning).toBe(
       '6408 output LSB per error LSB, 0 % from the wanted gain',
     );
     expect(byPath.get('carrier.acquire.integral.mantissa')?.meaning).toBe(
-      '−136.75 output LSB per error LSB, 0 % from the wanted gain',
+      '−35008 integrator LSB per error LSB, that is −136.75 output LSB, 0 % from the wanted gain',
     );
     // 1023·2^−12 / (0.25·2^−10) − 1 = 1022, that is +102200 %, three digits of it.
     expect(byPath.get('carrier.track.proportional.mantissa')?.meaning).toContain('+102000 %');
