@@ -6,11 +6,6 @@ const registerMap: RegisterMap = {
   wordBits: 32,
   byteOrder: 'little',
   registers: [
-    {
-      name: 'CAR_CTRL',
-      offset: 0x100,
-      fields: [bound('rounding', [5, 4], 'carrier.rounding'), { name: 'enable', high: 0, low: 0, constant: 1 }],
-    },
     { name: 'CAR_FCW', offset: 0x104, fields: [bound('fcw', [31, 0], 'carrier.nco.fcw')] },
     gainRegister('CAR_GAIN_ACQ', 0x108, 'carrier', 'acquire'),
     shiftRegister('CAR_SHIFT_ACQ', 0x10c, 'carrier', 'acquire'),
@@ -24,6 +19,12 @@ const registerMap: RegisterMap = {
         bound('average', [26, 16], 'carrier.lock.averagingSymbols'),
         bound('threshold', [8, 0], 'carrier.lock.threshold', { reset: 0x80 }),
       ],
+    },
+    // Last, so that the loop starts with its gains in place.
+    {
+      name: 'CAR_CTRL',
+      offset: 0x100,
+      fields: [bound('rounding', [5, 4], 'carrier.rounding'), { name: 'enable', high: 0, low: 0, constant: 1 }],
     },
   ],
 };
