@@ -9,7 +9,7 @@ export interface AuditEntry {
   person: PersonName | null;
   action: string;
   subject: string;
-  detail: object;
+  detail: Readonly<Record<string, unknown>>;
 }
 
 export interface NewAuditEntry {
@@ -36,7 +36,7 @@ const toEntry = ({ person_id, person_name, ...row }: AuditRow): AuditEntry => ({
   person: person_id === null ? null : { id: person_id, name: person_name! },
   action: row.action,
   subject: row.subject,
-  detail: parsed<object>(row.detail),
+  detail: parsed<AuditEntry['detail']>(row.detail),
 });
 
 export function auditRepository(db: Knex) {
