@@ -55,7 +55,7 @@ const checks: Record<HeadroomNode['node'], NodeCheck> = {
   proportional: {
     sound: 'The proportional path fits its word',
     fault: 'The proportional path leaves its word',
-    why: 'The loop loses the gain that keeps it damped.',
+    why: 'Beyond its word the loop loses the gain that keeps it damped.',
     field: (view) => pointerOf(view, oscillator(view)),
     remedy: (view) => ({
       remedy: `Lower ${numberOf(view, 'stages/0/noiseBandwidth')}, or the scale of the error (${numberOf(view, 'arithmetic/errorFullScaleLog2')}).`,
@@ -66,7 +66,7 @@ const checks: Record<HeadroomNode['node'], NodeCheck> = {
   increment: {
     sound: 'The integrator’s increment fits its word',
     fault: 'The integrator’s increment leaves its word',
-    why: 'The integrator moves by less than it should, or the wrong way.',
+    why: 'Beyond its word the integrator moves by less than it should, or the wrong way.',
     field: (view) => pointerOf(view, 'arithmetic/integratorBits'),
     remedy: widen('arithmetic/integratorBits', 64),
     fatal: true,
@@ -134,7 +134,7 @@ function nodeFinding(view: LoopView, node: HeadroomNode): Finding {
     limit,
     sense: 'min',
     unit: 'bits',
-    reason: `${amountOf(node)} ${check.why}`,
+    reason: severity === 'pass' ? amountOf(node) : `${amountOf(node)} ${check.why}`,
     ...remedyUnless(severity, () => check.remedy(view, limit - node.headroomBits)),
     fields: [check.field(view), '/limits/headroomBits'],
     source: 'follows from the datapath, signal with 4σ of noise',

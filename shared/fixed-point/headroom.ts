@@ -130,7 +130,7 @@ function frequencyNode(input: HeadroomInput, proportional: HeadroomNode[], held:
   return node('frequency-word', words.nco.widthBits, {
     reached: Math.abs(centre) + held + largest('reachedBits'),
     worst: Math.abs(centre) + holdable + largest('worstBits'),
-    signal: 'centre frequency, offset and largest error together',
+    signal: 'sum of centre frequency, offset and largest error',
     lsbHz: frequencyResolutionHz(words, symbolRateBd),
   });
 }

@@ -6,6 +6,12 @@ describe('headroom', () => {
     expect(carrierFinding(`headroom.${node}`).severity).toBe('pass');
   });
 
+  it('threatens nothing where all is well', () => {
+    const { reason } = carrierFinding('headroom.proportional');
+    expect(reason).toMatch(/^Stage acquire: the largest error leaves [0-9.]+ of 32 bits\.$/);
+    expect(carrierFinding('headroom.frequency-word').reason).toMatch(/^Sum of centre frequency, .* leaves [0-9.]+ of 32/);
+  });
+
   // By hand: the error of QPSK reaches 1 + 4·√2·√(1/20) = 2.265 at 10 dB, beyond ±2 by log2 1.1325 = 0.18 bits.
   it('cautions when noise peaks leave the error word, and widens its scale', () => {
     const finding = carrierFinding('headroom.error');
