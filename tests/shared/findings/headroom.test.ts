@@ -9,7 +9,9 @@ describe('headroom', () => {
   it('threatens nothing where all is well', () => {
     const { reason } = carrierFinding('headroom.proportional');
     expect(reason).toMatch(/^Stage acquire: the largest error leaves [0-9.]+ of 32 bits\.$/);
-    expect(carrierFinding('headroom.frequency-word').reason).toMatch(/^Sum of centre frequency, .* leaves [0-9.]+ of 32/);
+    expect(carrierFinding('headroom.frequency-word').reason).toMatch(
+      /^Sum of centre frequency, .* leaves [0-9.]+ of 32/,
+    );
   });
 
   // By hand: the error of QPSK reaches 1 + 4·√2·√(1/20) = 2.265 at 10 dB, beyond ±2 by log2 1.1325 = 0.18 bits.
