@@ -22,7 +22,14 @@ export function workOut(plan: Plan): WorkedOut {
   const complete = completePlan(plan);
   requireConsistent(complete);
   const loops = loopsOf(complete);
-  return { engine: engineVersion, plan: complete as unknown as Plan, ...loops, findings: findingsOf(complete, loops) };
+  return {
+    engine: engineVersion,
+    plan: complete as unknown as Plan,
+    ...loops,
+    findings: findingsOf(complete, loops),
+    solutions: [],
+    interaction: null,
+  };
 }
 
 function loopsOf(plan: CompletePlan): { carrier?: LoopDesign; clock?: LoopDesign } {

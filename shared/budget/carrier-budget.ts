@@ -24,6 +24,8 @@ export interface BudgetInput {
   updateInterval: number;
   updateRateHz: number;
   phaseNoise: PhaseNoiseTable | undefined;
+  /** Most jitter that the plan allows, degrees rms. */
+  limit: number;
 }
 
 /** One bandwidth of the sweep. */
@@ -47,6 +49,13 @@ export function carrierBudget(input: BudgetInput): Budget {
   const sweep = own === null ? [] : sweepAround(input, last.loop, own, grid);
   return {
     unit: 'deg',
+    limit: input.limit,
+    squaringLoss: null,
+    boundRatio: null,
+    drift: null,
+    nco: null,
+    implementationLoss: null,
+    slip: null,
     stages: input.stages.map(({ name, loop }) =>
       stageJitter(name, jitterVariance(loop, input.model, input.updateInterval, grid)),
     ),
@@ -61,8 +70,16 @@ function slowest({ stages }: BudgetInput): number {
 
 function stageJitter(stage: string, variance: JitterVariance): StageJitter {
   const { thermal, oscillator, total } = variance;
+  const none = { selfNoise: null, phaseQuantisation: null, wordQuantisation: null, drift: null };
   const dominant = thermal === null ? null : (oscillator ?? 0) > thermal ? 'oscillator' : 'thermal';
-  return { stage, thermal: toDegrees(thermal), oscillator: toDegrees(oscillator), total: toDegrees(total), dominant };
+  return {
+    stage,
+    ...none,
+    thermal: toDegrees(thermal),
+    oscillator: toDegrees(oscillator),
+    total: toDegrees(total),
+    dominant,
+  };
 }
 
 const toDegrees = (variance: number | null): number | null =>
@@ -110,6 +127,10 @@ function toSweep(points: SweepPoint[]): JitterSweep {
     noiseBandwidth: points.map((point) => point.noiseBandwidth),
     thermal: column(({ thermal }) => thermal),
     oscillator: column(({ oscillator }) => oscillator),
+    selfNoise: column(() => null),
+    phaseQuantisation: column(() => null),
+    wordQuantisation: column(() => null),
+    drift: column(() => null),
     total: column(({ total }) => total),
   };
 }

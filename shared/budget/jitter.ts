@@ -1,3 +1,4 @@
+import { isMemoryless, varianceOf } from '../detectors/detector';
 import type { DetectorModel } from '../detectors/detector';
 import { noiseBandwidth } from '../loop/noise-bandwidth';
 import type { LinearLoop } from '../loop/linear-loop';
@@ -20,8 +21,9 @@ export interface JitterVariance {
  */
 export function thermalVariance(loop: LinearLoop, model: DetectorModel, updateInterval: number): number | null {
   const bandwidth = noiseBandwidth(loop);
-  if (bandwidth === null || model.variance === null || !model.memoryless) return null;
-  return (2 * (bandwidth / updateInterval) * model.variance) / model.gain ** 2;
+  const variance = varianceOf(model);
+  if (bandwidth === null || variance === null || !isMemoryless(model)) return null;
+  return (2 * (bandwidth / updateInterval) * variance) / model.gain ** 2;
 }
 
 /** Thermal and oscillator part of one loop. Without a phase-noise table the oscillator's part is null, not nought. */

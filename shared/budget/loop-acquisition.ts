@@ -31,6 +31,7 @@ export function carrierAcquisition({ plan, model, first, held }: AcquisitionInpu
     largestOffsetHz: held,
     offsetPpm: null,
     largestOffsetPpm: null,
+    ...unknown,
     ...estimates(first, model, { offsetOmega, symbolRateBd }),
   };
 }
@@ -47,10 +48,20 @@ export function clockAcquisition({ plan, model, first, held }: AcquisitionInput)
     largestOffsetHz: null,
     offsetPpm,
     largestOffsetPpm: held,
+    ...unknown,
     lockInHz: null,
     pullInSymbols,
   };
 }
+
+const unknown = {
+  pullOutHz: null,
+  lockInPpm: null,
+  settlingSymbols: null,
+  totalSymbols: null,
+  stages: [],
+  lockDetector: null,
+};
 
 /** @param offsetOmega drift of the error that has to be pulled in, in the S-curve's own unit per second */
 function estimates(

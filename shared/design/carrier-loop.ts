@@ -2,7 +2,7 @@ import type { LoopDesign } from '../model/design';
 import { carrierBudget } from '../budget/carrier-budget';
 import { carrierAcquisition } from '../budget/loop-acquisition';
 import { carrierDetector } from '../detectors/carrier';
-import { sCurve } from '../detectors/detector';
+import { errorStatistics, sCurve } from '../detectors/detector';
 import type { DetectorModel } from '../detectors/detector';
 import { carrierHeadroom, frequencyResolutionHz, largestOffsetHeldHz } from '../fixed-point/headroom';
 import { carrierGains, carrierOscillatorGain } from '../fixed-point/loop-scale';
@@ -44,6 +44,7 @@ export function carrierLoop(plan: CompletePlan, carrier: CompleteCarrier): LoopD
     headroom: headroomOf(plan, words, carrier),
     budget: budgetOf(plan, carrier, { model, stages, updateRateHz }),
     acquisition: carrierAcquisition({ plan, model, first: designs[0]!, held }),
+    interpolator: null,
     resolutionHz: frequencyResolutionHz(words, signal.symbolRateBd),
     words,
   };
@@ -57,7 +58,7 @@ function detectorOf(carrier: CompleteCarrier, model: DetectorModel, oscillatorGa
     gainWithoutNoise: counted * model.gainWithoutNoise,
     oscillatorGain,
     period: model.period,
-    variance: model.variance === null ? null : counted * model.variance,
+    ...errorStatistics(model, counted),
     curve: sCurve(model, counted),
   };
 }
@@ -91,5 +92,6 @@ function budgetOf(plan: CompletePlan, carrier: CompleteCarrier, { model, stages,
     updateInterval: carrier.updateInterval,
     updateRateHz,
     phaseNoise: plan.environment.phaseNoise,
+    limit: plan.limits.phaseJitterDeg,
   });
 }

@@ -1,7 +1,7 @@
 import type { LoopDesign } from '../model/design';
 import { clockAcquisition } from '../budget/loop-acquisition';
 import { clockDetector } from '../detectors/clock';
-import { sCurve } from '../detectors/detector';
+import { errorStatistics, sCurve } from '../detectors/detector';
 import { clockHeadroom, largestErrorHeldPpm, rateResolutionHz } from '../fixed-point/clock-headroom';
 import { clockGains, clockOscillatorGain } from '../fixed-point/loop-scale';
 import { clockWords } from '../fixed-point/words';
@@ -39,7 +39,7 @@ export function clockLoop(plan: CompletePlan, clock: CompleteClock): LoopDesign 
       gainWithoutNoise: counted * model.gainWithoutNoise,
       oscillatorGain,
       period: model.period,
-      variance: null,
+      ...errorStatistics(model, counted),
       curve: sCurve(model, counted),
     },
     stages: designs,
@@ -56,6 +56,7 @@ export function clockLoop(plan: CompletePlan, clock: CompleteClock): LoopDesign 
       first: designs[0]!,
       held: largestErrorHeldPpm(words, samplesPerSymbol),
     }),
+    interpolator: null,
     resolutionHz: rateResolutionHz(words, { symbolRateBd, samplesPerSymbol }),
     words,
   };

@@ -45,7 +45,16 @@ function costasBpsk({ amplitude, esN0 }: CarrierSignal): DetectorModel {
   const gain = amplitude ** 2;
   const curve = (x: number): number => (gain / 2) * Math.sin(2 * x);
   const variance = (gain ** 2 * (1 + 1 / (2 * esN0))) / (2 * esN0);
-  return { gain, gainWithoutNoise: gain, period: Math.PI, variance, memoryless: true, noisy: curve, noiseless: curve };
+  return {
+    gain,
+    gainWithoutNoise: gain,
+    period: Math.PI,
+    covariance: [variance],
+    selfCovariance: [],
+    amplitudeExponent: 2,
+    noisy: curve,
+    noiseless: curve,
+  };
 }
 
 /** sgn(Re z) · Im z on BPSK: S(φ) = A sin φ · erf(√γ cos φ), Kd = A erf √γ, var e the noise of one rail. */
@@ -55,8 +64,9 @@ function signBpsk({ amplitude, esN0 }: CarrierSignal): DetectorModel {
     gain: amplitude * erf(root),
     gainWithoutNoise: amplitude,
     period: Math.PI,
-    variance: amplitude ** 2 / (2 * esN0),
-    memoryless: true,
+    covariance: [amplitude ** 2 / (2 * esN0)],
+    selfCovariance: [],
+    amplitudeExponent: 1,
     noisy: (x) => amplitude * Math.sin(x) * erf(root * Math.cos(x)),
     noiseless: (x) => amplitude * Math.sin(x) * Math.sign(Math.cos(x)),
   };
@@ -85,8 +95,9 @@ function signQpsk({ amplitude, esN0 }: CarrierSignal): DetectorModel {
     gain: amplitude * (2 * spread - 2 * Math.sqrt(esN0 / Math.PI) * tail),
     gainWithoutNoise: Math.SQRT2 * amplitude,
     period: Math.PI / 2,
-    variance: amplitude ** 2 * (1 + 1 / esN0 - 2 * magnitude ** 2),
-    memoryless: true,
+    covariance: [amplitude ** 2 * (1 + 1 / esN0 - 2 * magnitude ** 2)],
+    selfCovariance: [],
+    amplitudeExponent: 1,
     noisy: (x) => curve(x, (rail) => erf(root * rail)),
     noiseless: (x) => curve(x, Math.sign),
   };

@@ -45,5 +45,14 @@ export const gardnerSlope = (rollOff: number): number =>
 function gardner({ amplitude, rollOff }: ClockSignal): DetectorModel {
   const gain = amplitude ** 2 * gardnerSlope(rollOff);
   const curve = (x: number): number => (gain / (2 * Math.PI)) * Math.sin(2 * Math.PI * x);
-  return { gain, gainWithoutNoise: gain, period: 1, variance: null, memoryless: false, noisy: curve, noiseless: curve };
+  return {
+    gain,
+    gainWithoutNoise: gain,
+    period: 1,
+    covariance: null,
+    selfCovariance: [],
+    amplitudeExponent: 2,
+    noisy: curve,
+    noiseless: curve,
+  };
 }

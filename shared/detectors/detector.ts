@@ -6,13 +6,46 @@ export interface DetectorModel {
   gainWithoutNoise: number;
   /** Period of the S-curve: radians (carrier) or symbols (clock). */
   period: number;
-  /** Variance of the error at lock, detector units²; null where it is not worked out. */
-  variance: number | null;
-  /** Whether errors of different symbols are uncorrelated, so that their spectrum is flat. */
-  memoryless: boolean;
+  /**
+   * Autocovariance of the errors at lock over lags of 0, 1, 2 … evaluations (one a symbol), detector units²: channel
+   * noise and pattern together. The first is the variance; one entry alone says that errors are uncorrelated. Null
+   * where it is not worked out.
+   */
+  covariance: readonly number[] | null;
+  /** The part of it that is left without channel noise, at as many lags or fewer; empty where there is none. */
+  selfCovariance: readonly number[];
+  /** The slope goes with the amplitude to this power. */
+  amplitudeExponent: number;
   /** Mean error at a static offset x (radians or symbols), with and without noise. */
   noisy: (x: number) => number;
   noiseless: (x: number) => number;
+}
+
+/** Whether errors of different evaluations are uncorrelated, so that their spectrum is flat. */
+export const isMemoryless = ({ covariance }: DetectorModel): boolean => covariance?.length === 1;
+
+/** Variance of one error at lock, detector units²; null where it is not worked out. */
+export const varianceOf = ({ covariance }: DetectorModel): number | null => covariance?.[0] ?? null;
+
+/** Spectral density of the error of one evaluation per symbol at frequency 0: the sum over all lags, both signs. */
+export const spectrumAtZero = ({ covariance }: DetectorModel): number | null =>
+  covariance && covariance.slice(1).reduce((sum, value) => sum + 2 * value, covariance[0] ?? 0);
+
+/**
+ * What is known of the error at lock.
+ *
+ * @param counted evaluations that one update adds up
+ */
+export function errorStatistics(model: DetectorModel, counted: number) {
+  const [variance, spectrum] = [varianceOf(model), spectrumAtZero(model)];
+  return {
+    variance: variance === null ? null : counted * variance,
+    memoryless: isMemoryless(model),
+    spectrumAtZero: spectrum === null ? null : counted * spectrum,
+    selfNoise: variance === null ? null : counted * (model.selfCovariance[0] ?? 0),
+    amplitudeExponent: model.amplitudeExponent,
+    nulls: [],
+  };
 }
 
 export interface SCurveShape {

@@ -45,8 +45,23 @@ export function stageDesign(input: StageInput): StageDesign {
     words,
     ...responses(loop, input.updateRateHz),
     marginAgainstDelay: marginCurve(loop, limits.crossings),
+    frequencyStep: null,
+    frequencyRamp: null,
+    rootLocus: { ratio: [], poles: [], critical: [] },
+    bandwidthAgainstDelay: { delay: [], noiseBandwidth: [] },
+    amplitude: { low: unknownEnd, high: unknownEnd },
   };
 }
+
+const unknownEnd = {
+  amplitudeDb: 0,
+  gainDb: 0,
+  stable: false,
+  noiseBandwidth: null,
+  damping: null,
+  naturalFrequencyHz: null,
+  phaseDeg: null,
+};
 
 function stageGains({ wanted, solved, perUnit }: StageInput): Gains {
   const { g1, g2, g3 } = solved.loop.gains;

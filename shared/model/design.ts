@@ -25,6 +25,14 @@ export interface Design {
    * Failing first, then caution, then pass.
    */
   findings: Finding[];
+  /**
+   * Values that would just meet the limits.
+   */
+  solutions: Solution[];
+  /**
+   * What the two loops do to each other.
+   */
+  interaction: null | LoopInteraction;
 }
 
 /**
@@ -54,6 +62,10 @@ export interface LoopDesign {
    */
   resolutionHz: number | null;
   words: Words;
+  /**
+   * What the interpolator adds; clock loop only.
+   */
+  interpolator: null | InterpolatorError;
 }
 
 /**
@@ -85,6 +97,26 @@ export interface Detector {
    */
   variance: number | null;
   curve: SCurve;
+  /**
+   * Errors of different evaluations are uncorrelated.
+   */
+  memoryless: boolean;
+  /**
+   * Spectral density of the error at frequency 0 over one update, detector units²; equals the variance where errors are uncorrelated.
+   */
+  spectrumAtZero: number | null;
+  /**
+   * Variance of the error at lock without noise, detector units².
+   */
+  selfNoise: number | null;
+  /**
+   * The slope goes with the amplitude to this power.
+   */
+  amplitudeExponent: number;
+  /**
+   * Zeros of the S-curve with noise over one period, rising.
+   */
+  nulls: DetectorNull[];
 }
 
 /**
@@ -103,6 +135,24 @@ export interface SCurve {
    * One value for each point; null where there is none.
    */
   noisy: (number | null)[];
+}
+
+/**
+ * A zero of the S-curve with noise.
+ */
+export interface DetectorNull {
+  /**
+   * Radians (carrier) or symbols (clock), within half a period of lock.
+   */
+  x: number;
+  /**
+   * The loop settles here.
+   */
+  stable: boolean;
+  /**
+   * Lock itself.
+   */
+  lock: boolean;
 }
 
 /**
@@ -175,6 +225,17 @@ export interface StageDesign {
   phaseStep: PhaseStep;
   response: Response;
   marginAgainstDelay: MarginAgainstDelay;
+  /**
+   * Phase error after a frequency step of one radian (symbol) per update; null where the loop is unstable.
+   */
+  frequencyStep: null | Curve;
+  /**
+   * Phase error while the frequency rises by one radian (symbol) per update each update; null where the loop is unstable.
+   */
+  frequencyRamp: null | Curve;
+  rootLocus: RootLocus;
+  bandwidthAgainstDelay: BandwidthAgainstDelay;
+  amplitude: AmplitudeEnds;
 }
 
 /**
@@ -317,6 +378,106 @@ export interface MarginAgainstDelay {
 }
 
 /**
+ * A response over updates.
+ */
+export interface Curve {
+  /**
+   * One value for each point.
+   */
+  updates: number[];
+  /**
+   * One value for each point.
+   */
+  value: number[];
+  /**
+   * Largest magnitude.
+   */
+  peak: number;
+  /**
+   * Update at which it is reached.
+   */
+  peakUpdates: number;
+  /**
+   * Where it ends; null where it grows without bound.
+   */
+  settled: number | null;
+}
+
+/**
+ * Closed-loop poles over the gain.
+ */
+export interface RootLocus {
+  /**
+   * Gain over this stage's own, rising, 1 among them.
+   */
+  ratio: number[];
+  /**
+   * One list for each ratio.
+   */
+  poles: number[][][];
+  /**
+   * Ratios at which a pole lies on the unit circle.
+   */
+  critical: number[];
+}
+
+/**
+ * Noise bandwidth of these gains over the extra delay.
+ */
+export interface BandwidthAgainstDelay {
+  /**
+   * One value for each point.
+   */
+  delay: number[];
+  /**
+   * BnT, cycles per symbol; null where the loop is unstable.
+   */
+  noiseBandwidth: (number | null)[];
+}
+
+/**
+ * The loop at both ends of the gain control's error.
+ */
+export interface AmplitudeEnds {
+  low: AmplitudeEnd;
+  high: AmplitudeEnd;
+}
+
+/**
+ * The loop with the gain control at one end of its error.
+ */
+export interface AmplitudeEnd {
+  /**
+   * Error of the amplitude, dB.
+   */
+  amplitudeDb: number;
+  /**
+   * Change of the loop gain, dB.
+   */
+  gainDb: number;
+  /**
+   * Every closed-loop pole lies inside the unit circle.
+   */
+  stable: boolean;
+  /**
+   * BnT, cycles per symbol.
+   */
+  noiseBandwidth: number | null;
+  /**
+   * Damping factor.
+   */
+  damping: number | null;
+  /**
+   * Natural frequency, Hz.
+   */
+  naturalFrequencyHz: number | null;
+  /**
+   * Phase margin, degrees.
+   */
+  phaseDeg: number | null;
+}
+
+/**
  * One node of the datapath.
  */
 export interface HeadroomNode {
@@ -379,6 +540,34 @@ export interface Budget {
    * Least total jitter; null where nothing rises with bandwidth.
    */
   best: null | BestBandwidth;
+  /**
+   * Most that the plan allows, same unit.
+   */
+  limit: number;
+  /**
+   * Thermal variance over that of a detector that knows the symbols, ratio; null for a clock loop.
+   */
+  squaringLoss: number | null;
+  /**
+   * Thermal and self-noise variance over the modified Cramér–Rao bound at the same noise bandwidth, last stage.
+   */
+  boundRatio: number | null;
+  /**
+   * Static error under drift, last stage.
+   */
+  drift: null | Drift;
+  /**
+   * What the phase bits of the NCO leave.
+   */
+  nco: null | NcoSpurs;
+  /**
+   * What the jitter of the last stage costs.
+   */
+  implementationLoss: null | ImplementationLoss;
+  /**
+   * Mean time to a cycle slip, last stage: an estimate.
+   */
+  slip: null | CycleSlip;
 }
 
 /**
@@ -390,21 +579,37 @@ export interface StageJitter {
    */
   stage: string;
   /**
-   * rms from noise.
+   * rms from channel noise.
    */
   thermal: number | null;
+  /**
+   * rms from the pattern of the data alone; 0 where there is none.
+   */
+  selfNoise: number | null;
   /**
    * rms from the phase-noise table; null without one.
    */
   oscillator: number | null;
   /**
-   * rms of all terms.
+   * rms from the phase bits and tables of the NCO (the fraction bits of the counter).
+   */
+  phaseQuantisation: number | null;
+  /**
+   * rms from the rounding of the error and loop words.
+   */
+  wordQuantisation: number | null;
+  /**
+   * Static error under the frequency drift asked for; not random.
+   */
+  drift: number | null;
+  /**
+   * Root of the sum of squares of all terms.
    */
   total: number | null;
   /**
-   * The larger term.
+   * The largest term.
    */
-  dominant: 'thermal' | 'oscillator' | null;
+  dominant: 'thermal' | 'selfNoise' | 'oscillator' | 'phaseQuantisation' | 'wordQuantisation' | 'drift' | null;
 }
 
 /**
@@ -412,7 +617,7 @@ export interface StageJitter {
  */
 export interface JitterSweep {
   /**
-   * One value for each point.
+   * Asked BnT; one value for each point.
    */
   noiseBandwidth: number[];
   /**
@@ -422,7 +627,23 @@ export interface JitterSweep {
   /**
    * One value for each point; null where there is none.
    */
+  selfNoise: (number | null)[];
+  /**
+   * One value for each point; null where there is none.
+   */
   oscillator: (number | null)[];
+  /**
+   * One value for each point; null where there is none.
+   */
+  phaseQuantisation: (number | null)[];
+  /**
+   * One value for each point; null where there is none.
+   */
+  wordQuantisation: (number | null)[];
+  /**
+   * One value for each point; null where there is none.
+   */
+  drift: (number | null)[];
   /**
    * One value for each point; null where there is none.
    */
@@ -441,6 +662,78 @@ export interface BestBandwidth {
    * rms.
    */
   total: number;
+}
+
+/**
+ * Static error under drift, last stage.
+ */
+export interface Drift {
+  /**
+   * Doppler rate asked for, Hz/s.
+   */
+  rateHzPerS: number;
+  /**
+   * Error that stands, degrees; null where it grows without bound.
+   */
+  staticError: number | null;
+}
+
+/**
+ * What the phase bits of the NCO leave.
+ */
+export interface NcoSpurs {
+  /**
+   * rms of the phase truncation, degrees.
+   */
+  truncationDeg: number;
+  /**
+   * Worst spur of the phase truncation, dBc.
+   */
+  worstSpurDbc: number;
+  /**
+   * Frequency resolution, Hz.
+   */
+  resolutionHz: number;
+}
+
+/**
+ * What the jitter of the last stage costs.
+ */
+export interface ImplementationLoss {
+  /**
+   * Loss at the operating point, dB; null where no Es/N0 without jitter has this error rate.
+   */
+  lossDb: number | null;
+  /**
+   * Mean symbol error rate with the jitter.
+   */
+  symbolErrorRate: number;
+  /**
+   * Symbol error rate without jitter.
+   */
+  idealSymbolErrorRate: number;
+}
+
+/**
+ * Mean time to a cycle slip, last stage: an estimate.
+ */
+export interface CycleSlip {
+  /**
+   * Loop signal-to-noise ratio ρ = 1/(M²σ²).
+   */
+  rho: number;
+  /**
+   * First-order formula, seconds; null where it is beyond 1e300.
+   */
+  seconds: number | null;
+  /**
+   * The same in symbols.
+   */
+  symbols: number | null;
+  /**
+   * Named method.
+   */
+  method: string;
 }
 
 /**
@@ -479,6 +772,122 @@ export interface Acquisition {
    * Estimate of the pull-in time from the largest offset, symbols.
    */
   pullInSymbols: number | null;
+  /**
+   * Estimate of the frequency step that does not slip a cycle, Hz.
+   */
+  pullOutHz: number | null;
+  /**
+   * Clock: estimate of the rate error that locks without a slip, ppm.
+   */
+  lockInPpm: number | null;
+  /**
+   * Symbols in which the first stage settles.
+   */
+  settlingSymbols: number | null;
+  /**
+   * Pull-in, settling and stage switches together, symbols.
+   */
+  totalSymbols: number | null;
+  /**
+   * One entry a stage.
+   */
+  stages: StageTime[];
+  /**
+   * The lock detector's statistic over one block.
+   */
+  lockDetector: null | LockFigures;
+}
+
+/**
+ * When a stage is left.
+ */
+export interface StageTime {
+  /**
+   * Stage.
+   */
+  stage: string;
+  /**
+   * Symbols after which it is left; null: not by count.
+   */
+  untilSymbols: number | null;
+  /**
+   * Estimate of what it needs to settle, symbols.
+   */
+  neededSymbols: number | null;
+}
+
+/**
+ * The lock detector's statistic over one block.
+ */
+export interface LockFigures {
+  /**
+   * Symbols in a block.
+   */
+  averagingSymbols: number;
+  /**
+   * Mean of the statistic in lock with the last stage's jitter.
+   */
+  meanLocked: number;
+  /**
+   * Standard deviation of the statistic in lock.
+   */
+  deviationLocked: number;
+  /**
+   * Standard deviation of the statistic out of lock, mean 0.
+   */
+  deviationUnlocked: number;
+  /**
+   * Thresholds of the plan.
+   */
+  thresholds: LockThreshold[];
+}
+
+/**
+ * One threshold.
+ */
+export interface LockThreshold {
+  /**
+   * Stage that is left at it; null: the plan's own lock detector.
+   */
+  stage: string | null;
+  /**
+   * Share of the block power.
+   */
+  threshold: number;
+  /**
+   * Probability that a block out of lock passes.
+   */
+  falseAlarm: number;
+  /**
+   * Probability that a block in lock fails.
+   */
+  miss: number;
+}
+
+/**
+ * What the interpolator adds; clock loop only.
+ */
+export interface InterpolatorError {
+  /**
+   * Signal over error for random data, dB.
+   */
+  signalOverErrorDb: number;
+  /**
+   * Worst error over the signal band and all fractions, dB below the signal.
+   */
+  worstErrorDb: number;
+  /**
+   * Cycles per sample; one value for each point.
+   */
+  frequency: number[];
+  /**
+   * Error over the fractions, rms, dB; one value for each point.
+   */
+  errorDb: (number | null)[];
+  /**
+   * Edge of the signal band, cycles per sample.
+   */
+  bandEdge: number;
 }
 
 /**
@@ -555,4 +964,114 @@ export interface Change {
    * What the button says.
    */
   label: string;
+}
+
+/**
+ * The value of one field that would just meet one limit.
+ */
+export interface Solution {
+  /**
+   * Stable name.
+   */
+  slug: string;
+  /**
+   * Loop.
+   */
+  loop: 'carrier' | 'clock';
+  /**
+   * Stage, where it belongs to one.
+   */
+  stage: string | null;
+  /**
+   * What is solved for.
+   */
+  title: string;
+  /**
+   * JSON pointer of the limit that it meets.
+   */
+  limit: string;
+  /**
+   * The limit in words, with its unit.
+   */
+  limitText: string;
+  /**
+   * The value; null where none meets the limit.
+   */
+  value: number | null;
+  /**
+   * Unit of the value, empty where dimensionless.
+   */
+  unit: string;
+  /**
+   * Whether the value is the most or the least allowed.
+   */
+  sense: 'max' | 'min';
+  /**
+   * The plan's present value, same unit.
+   */
+  present: number | null;
+  /**
+   * Why there is no value, or what else bounds it.
+   */
+  note: string | null;
+  /**
+   * The value is an estimate.
+   */
+  estimate: boolean;
+  /**
+   * The edit that the remedy would type.
+   */
+  change: null | Change1;
+}
+
+/**
+ * The edit that the remedy would type.
+ */
+export interface Change1 {
+  /**
+   * JSON pointer into the plan.
+   */
+  pointer: string;
+  /**
+   * New value.
+   */
+  value: number | string | boolean;
+  /**
+   * What the button says.
+   */
+  label: string;
+}
+
+/**
+ * What the two loops do to each other.
+ */
+export interface LoopInteraction {
+  /**
+   * Noise bandwidth of the carrier loop over that of the clock loop, last stages, Hz over Hz.
+   */
+  bandwidthRatio: number | null;
+  /**
+   * The timing detector needs a locked carrier.
+   */
+  clockNeedsCarrier: boolean;
+  /**
+   * The phase detector needs a locked clock.
+   */
+  carrierNeedsClock: boolean;
+  /**
+   * Which loop can start before the other has locked.
+   */
+  startFirst: 'carrier' | 'clock' | 'either' | 'neither';
+  /**
+   * Phase jitter that the timing jitter adds, degrees rms.
+   */
+  carrierFromTimingDeg: number | null;
+  /**
+   * Signal that the timing jitter costs, dB.
+   */
+  lossFromTimingDb: number | null;
+  /**
+   * Timing slope left by the phase jitter, ratio.
+   */
+  clockGainFromPhase: number | null;
 }

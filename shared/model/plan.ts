@@ -159,6 +159,20 @@ export interface CarrierLoop {
    */
   order?: 1 | 2 | 3;
   /**
+   * Analog form of a loop of order 3: s³ + b3·ω0·s² + a3·ω0²·s + ω0³.
+   */
+  thirdOrder?: {
+    /**
+     * Coefficient a3.
+     */
+    a3?: number;
+    /**
+     * Coefficient b3.
+     */
+    b3?: number;
+  };
+
+  /**
    * Symbols between loop updates: a whole number, or 1/m for m updates per symbol.
    */
   updateInterval?: number;
@@ -351,6 +365,20 @@ export interface ClockLoop {
    * Order of the loop.
    */
   order?: 1 | 2 | 3;
+  /**
+   * Analog form of a loop of order 3: s³ + b3·ω0·s² + a3·ω0²·s + ω0³.
+   */
+  thirdOrder?: {
+    /**
+     * Coefficient a3.
+     */
+    a3?: number;
+    /**
+     * Coefficient b3.
+     */
+    b3?: number;
+  };
+
   /**
    * Symbols between loop updates: a whole number, or 1/m for m updates per symbol.
    */

@@ -23,6 +23,7 @@ const budgetOf = (
 ) =>
   carrierBudget({
     model,
+    limit: 3,
     stages: [{ name: 'track', loop: nominal(bandwidth, delay) }],
     damping: Math.SQRT1_2,
     method,
@@ -102,6 +103,7 @@ describe('carrierBudget', () => {
     const loop = linearLoop({ gains: nominalGains(1, { damping: 1, theta: 0.01 }), delay: 0, averaged: 1 });
     const budget = carrierBudget({
       model,
+      limit: 3,
       stages: [{ name: 'only', loop }],
       damping: 1,
       method: 'nominal',

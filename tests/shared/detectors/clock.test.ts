@@ -57,6 +57,6 @@ describe('clockDetector', () => {
   });
 
   it('gives no variance that a flat spectrum could be made of', () => {
-    expect(clockDetector('gardner', signal)).toMatchObject({ variance: null, memoryless: false });
+    expect(clockDetector('gardner', signal)).toMatchObject({ covariance: null });
   });
 });

@@ -69,6 +69,16 @@ const achieved = (wanted: number | null, exact: number | null, effective: number
   effective,
 });
 
+const amplitudeEnd = (amplitudeDb: number) => ({
+  amplitudeDb,
+  gainDb: amplitudeDb,
+  stable: true,
+  noiseBandwidth: null,
+  damping: null,
+  naturalFrequencyHz: null,
+  phaseDeg: null,
+});
+
 const stage = (name: string, proportional: number, integral: number): StageDesign => ({
   name,
   gains: { g1: 0.0263, g2: 0.00035, proportional, integral },
@@ -94,6 +104,11 @@ const stage = (name: string, proportional: number, integral: number): StageDesig
   phaseStep: { updates: [], phase: [] },
   response: { frequency: [], frequencyHz: [], hDb: [], eDb: [] },
   marginAgainstDelay: { delay: [], phaseDeg: [] },
+  frequencyStep: null,
+  frequencyRamp: null,
+  rootLocus: { ratio: [], poles: [], critical: [] },
+  bandwidthAgainstDelay: { delay: [], noiseBandwidth: [] },
+  amplitude: { low: amplitudeEnd(-1), high: amplitudeEnd(1) },
 });
 
 const loop = (name: string, words: CarrierWords | ClockWords, stages: StageDesign[]): LoopDesign => ({
@@ -105,6 +120,11 @@ const loop = (name: string, words: CarrierWords | ClockWords, stages: StageDesig
     oscillatorGain: 1.46e-9,
     period: Math.PI / 2,
     variance: null,
+    memoryless: true,
+    spectrumAtZero: null,
+    selfNoise: null,
+    amplitudeExponent: 1,
+    nulls: [],
     curve: { x: [], noiseless: [], noisy: [] },
   },
   stages,
@@ -119,7 +139,14 @@ const loop = (name: string, words: CarrierWords | ClockWords, stages: StageDesig
     largestOffsetPpm: null,
     lockInHz: null,
     pullInSymbols: null,
+    pullOutHz: null,
+    lockInPpm: null,
+    settlingSymbols: null,
+    totalSymbols: null,
+    stages: [],
+    lockDetector: null,
   },
+  interpolator: null,
   resolutionHz: 0.0064,
   words,
 });
