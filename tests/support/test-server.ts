@@ -42,7 +42,7 @@ export interface TestOptions {
   secure?: boolean;
 }
 
-const secret = 'a secret of these tests, 32 characters or more';
+export const testSecret = 'a secret of these tests, 32 characters or more';
 const publicUrl = 'http://keepstep.example';
 
 async function signIn(db: Knex, clock: { now: Date }, person: Omit<SignedIn, 'sessionId'>): Promise<SignedIn> {
@@ -69,11 +69,11 @@ export async function startTestServer(options: TestOptions = {}): Promise<TestSe
   const db = openDb(database.appUrl, { connections: 12 });
   const clock = { now: new Date() };
   const logger = log ? pino({ level: 'debug' }, log) : pino({ level: 'silent' });
-  const services = createServices({ db, clock: () => clock.now, logger, secret, publicUrl }, queue);
-  const app = createApp({ services, secret, logger, webFolder, secure, demo: false });
+  const services = createServices({ db, clock: () => clock.now, logger, secret: testSecret, publicUrl }, queue);
+  const app = createApp({ services, secret: testSecret, logger, webFolder, secure, demo: false });
   const people = await invitePeople(db, services, clock);
 
-  const tokenOf = ({ id, sessionId }: SignedIn) => accessToken(id, sessionId, secret, clock.now);
+  const tokenOf = ({ id, sessionId }: SignedIn) => accessToken(id, sessionId, testSecret, clock.now);
   function as(role?: Role): Client {
     const call = (method: Method) => (path: string, body?: object) => {
       const test = supertest(app)[method](`/api/v1${path}`);
