@@ -34,13 +34,3 @@ export const falseLockSpacingHz = (symmetry: number, symbolRateBd: number): numb
  */
 export const lockInOmega = ({ damping, omegaN }: LoopDynamics, { largest }: SCurveShape): number =>
   2 * damping * omegaN * largest;
-
-/**
- * Estimate of the time that the integrator takes to pull the loop in from an offset Δω (rad/s): Δω²/(4ζωn³⟨s²⟩),
- * seconds. Good above six lock-in ranges; nought within the lock-in range, where no cycle slips.
- */
-export function pullInSeconds(dynamics: LoopDynamics, shape: SCurveShape, offsetOmega: number): number {
-  if (offsetOmega <= lockInOmega(dynamics, shape)) return 0;
-  const { damping, omegaN } = dynamics;
-  return offsetOmega ** 2 / (4 * damping * omegaN ** 3 * shape.meanSquare);
-}

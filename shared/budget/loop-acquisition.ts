@@ -2,10 +2,11 @@ import type { Acquisition, StageDesign } from '../model/design';
 import { sCurveShape } from '../detectors/detector';
 import type { DetectorModel } from '../detectors/detector';
 import { rotationalSymmetry } from '../detectors/modulations';
-import type { CompletePlan } from '../plan/complete';
+import type { CompleteCarrier, CompleteClock, CompletePlan } from '../plan/complete';
 import { askedErrorPpm, askedOffsetHz } from '../plan/required-offset';
-import { falseLockSpacingHz, lockInOmega, pullInSeconds, unambiguousOffsetHz } from './acquisition';
+import { falseLockSpacingHz, lockInOmega, unambiguousOffsetHz } from './acquisition';
 import type { LoopDynamics } from './acquisition';
+import { pullIn } from './pull-in';
 
 export interface AcquisitionInput {
   plan: CompletePlan;
@@ -32,7 +33,7 @@ export function carrierAcquisition({ plan, model, first, held }: AcquisitionInpu
     offsetPpm: null,
     largestOffsetPpm: null,
     ...unknown,
-    ...estimates(first, model, { offsetOmega, symbolRateBd }),
+    ...estimates({ first, model, loop: plan.carrier as CompleteCarrier }, { offsetOmega, symbolRateBd }),
   };
 }
 
@@ -40,7 +41,11 @@ export function carrierAcquisition({ plan, model, first, held }: AcquisitionInpu
 export function clockAcquisition({ plan, model, first, held }: AcquisitionInput): Acquisition {
   const symbolRateBd = plan.signal.symbolRateBd;
   const offsetPpm = askedErrorPpm(plan.environment);
-  const { pullInSymbols } = estimates(first, model, { offsetOmega: offsetPpm * 1e-6 * symbolRateBd, symbolRateBd });
+  const offsetOmega = offsetPpm * 1e-6 * symbolRateBd;
+  const { pullInSymbols } = estimates(
+    { first, model, loop: plan.clock as CompleteClock },
+    { offsetOmega, symbolRateBd },
+  );
   return {
     unambiguousHz: null,
     falseLockSpacingHz: null,
@@ -51,6 +56,7 @@ export function clockAcquisition({ plan, model, first, held }: AcquisitionInput)
     ...unknown,
     lockInHz: null,
     pullInSymbols,
+    pullInRangeHz: null,
   };
 }
 
@@ -63,18 +69,31 @@ const unknown = {
   lockDetector: null,
 };
 
+interface EstimateInput {
+  first: StageDesign;
+  model: DetectorModel;
+  loop: Pick<CompleteCarrier | CompleteClock, 'updateInterval' | 'delay'>;
+}
+
 /** @param offsetOmega drift of the error that has to be pulled in, in the S-curve's own unit per second */
 function estimates(
-  first: StageDesign,
-  model: DetectorModel,
+  { first, model, loop }: EstimateInput,
   { offsetOmega, symbolRateBd }: { offsetOmega: number | null; symbolRateBd: number },
 ) {
   const dynamics = loopDynamics(first);
-  if (!dynamics) return { lockInHz: null, pullInSymbols: null };
+  if (!dynamics) return { lockInHz: null, pullInSymbols: null, pullInRangeHz: null };
   const shape = sCurveShape(model);
+  const lockIn = lockInOmega(dynamics, shape);
+  const { updateInterval, delay } = loop;
+  const { g1, g2 } = first.gains;
+  const offset = (offsetOmega ?? 0) / symbolRateBd;
+  const { symbols, reach } = pullIn({ g1, g2, updateInterval, delay }, shape.powers, model.period, offset);
+  const slips = (offsetOmega ?? 0) > lockIn;
   return {
-    lockInHz: lockInOmega(dynamics, shape) / (2 * Math.PI),
-    pullInSymbols: offsetOmega === null ? null : pullInSeconds(dynamics, shape, offsetOmega) * symbolRateBd,
+    lockInHz: lockIn / (2 * Math.PI),
+    // Within the lock-in range no cycle slips.
+    pullInSymbols: offsetOmega === null ? null : slips ? symbols : 0,
+    pullInRangeHz: (reach * symbolRateBd) / (2 * Math.PI),
   };
 }
 

@@ -53,10 +53,19 @@ export interface SCurveShape {
   largest: number;
   /** Mean square ⟨s²⟩ over a period. */
   meanSquare: number;
+  /** ½b_n² of the series Σ b_n·sin(2πnx/period), n = 1, 2 …; their sum is ⟨s²⟩. */
+  powers: number[];
 }
 
 const curvePoints = 121;
 const shapePoints = 256;
+const harmonics = 11;
+/** sin(2πn·x) at the places of a shape, n = 1, 2 … */
+const sines = Array.from({ length: harmonics }, (_, n) =>
+  Float64Array.from({ length: shapePoints }, (_each, i) =>
+    Math.sin(2 * Math.PI * (n + 1) * ((i + 0.5) / shapePoints - 0.5)),
+  ),
+);
 
 /** The S-curve over one period, centred on lock. */
 export function sCurve(model: DetectorModel, scale: number) {
@@ -68,5 +77,11 @@ export function sCurve(model: DetectorModel, scale: number) {
 /** Shape of the S-curve with noise, over its slope at lock. */
 export function sCurveShape({ noisy, gain, period }: DetectorModel): SCurveShape {
   const s = Array.from({ length: shapePoints }, (_, i) => noisy(period * ((i + 0.5) / shapePoints - 0.5)) / gain);
-  return { largest: Math.max(...s), meanSquare: s.reduce((sum, value) => sum + value ** 2, 0) / shapePoints };
+  const mean = (of: (value: number, i: number) => number) =>
+    s.reduce((sum, value, i) => sum + of(value, i), 0) / shapePoints;
+  const meanSquare = mean((value) => value ** 2);
+  const powers = sines.map((sine) => (2 * mean((value, i) => value * sine[i]!)) ** 2 / 2);
+  // The rest of the series counts as one more harmonic.
+  const rest = Math.max(0, meanSquare - powers.reduce((sum, power) => sum + power, 0));
+  return { largest: Math.max(...s), meanSquare, powers: [...powers, rest] };
 }

@@ -16,7 +16,7 @@ const estimateFactor = 2;
 const spareTime = 1.1;
 
 export const acquisitionFindings = (view: LoopView): Finding[] => [
-  ...(view.key === 'carrier' ? [...ambiguity(view), ...integratorRange(view)] : []),
+  ...(view.key === 'carrier' ? [...ambiguity(view), ...integratorRange(view), ...pullInRange(view)] : []),
   ...pullIn(view),
 ];
 
@@ -79,6 +79,34 @@ const limitHz = ({ loop }: LoopView): number | undefined =>
 /** What the integrator's word alone would hold, Hz. */
 const wordRangeHz = ({ design, plan }: LoopView): number =>
   largestOffsetHeldHz({ ...(design.words as CarrierWords), integratorLimit: null }, plan.signal.symbolRateBd);
+
+/** Share of the pull-in range above which the time goes up steeply and the estimate is not to be leant on. */
+const safeShare = 0.8;
+
+function pullInRange(view: LoopView): Finding[] {
+  const { offsetHz, lockInHz, pullInRangeHz } = view.design.acquisition;
+  if (offsetHz === null || lockInHz === null || pullInRangeHz === null || offsetHz <= lockInHz) return [];
+  const severity: Severity =
+    offsetHz >= pullInRangeHz ? 'fail' : offsetHz > safeShare * pullInRangeHz ? 'caution' : 'pass';
+  const first = stageAt(view, 0);
+  return [
+    finding({
+      slug: 'acquisition.pull-in-range',
+      severity,
+      title: passed(severity, 'The loop is pulled towards lock', 'The delay turns the pull-in round'),
+      ...inOneUnit(offsetHz, pullInRangeHz),
+      sense: 'max',
+      reason: `While the loop slips, the lag of its updates turns the beat; beyond about ±${sayHz(pullInRangeHz)} the integrator is driven away from lock. The carrier can be ±${sayHz(offsetHz)} off (4.2, 4.3).`,
+      ...remedyUnless(severity, () => ({
+        remedy: `Search the offset in steps of ±${sayHz(Math.max(lockInHz, safeShare * pullInRangeHz))}, or shorten ${numberOf(view, 'delay')} or ${numberOf(view, 'updateInterval')}.`,
+        change: null,
+      })),
+      fields: [pointerOf(view, 'delay'), bandwidthPointer(first), '/environment/carrierTolerancePpm'],
+      source: 'describing function of the slipping loop, derived',
+      estimate: true,
+    }),
+  ];
+}
 
 function pullIn(view: LoopView): Finding[] {
   const estimate = view.design.acquisition.pullInSymbols;

@@ -773,6 +773,10 @@ export interface Acquisition {
    */
   pullInSymbols: number | null;
   /**
+   * Estimate of the largest offset from which a slipping loop is driven towards lock, Hz.
+   */
+  pullInRangeHz: number | null;
+  /**
    * Estimate of the frequency step that does not slip a cycle, Hz.
    */
   pullOutHz: number | null;

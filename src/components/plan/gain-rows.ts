@@ -142,7 +142,8 @@ type Whole = Omit<GainCell, 'value'> & { value: number | null };
 
 /** What belongs to the loop and to no single stage: the slope at lock, and how far off it may start. */
 function rangeRows({ detector, stages, acquisition, resolutionHz }: LoopDesign): GainRow[] {
-  const { unambiguousHz, falseLockSpacingHz, offsetHz, largestOffsetHz, lockInHz, pullInSymbols } = acquisition;
+  const { unambiguousHz, falseLockSpacingHz, offsetHz, largestOffsetHz, lockInHz, pullInSymbols, pullInRangeHz } =
+    acquisition;
   const { offsetPpm, largestOffsetPpm } = acquisition;
   const put = (label: string, unit: string, cell: Whole): GainRow => ({
     ...{ label, unit },
@@ -162,6 +163,7 @@ function rangeRows({ detector, stages, acquisition, resolutionHz }: LoopDesign):
     put('Rate error to expect', 'ppm', { value: offsetPpm || null, decimals: 1 }),
     put('Rate error held', 'ppm', { value: largestOffsetPpm, decimals: 1 }),
     hertz('Lock-in, estimate', lockInHz),
+    hertz('Pull-in range, estimate', pullInRangeHz),
     put('Pull-in, estimate', 'symbols', { value: pullInSymbols || null, decimals: 0 }),
   ]);
 }

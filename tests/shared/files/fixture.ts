@@ -139,6 +139,7 @@ const loop = (name: string, words: CarrierWords | ClockWords, stages: StageDesig
     largestOffsetPpm: null,
     lockInHz: null,
     pullInSymbols: null,
+    pullInRangeHz: null,
     pullOutHz: null,
     lockInPpm: null,
     settlingSymbols: null,

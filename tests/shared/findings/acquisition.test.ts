@@ -1,6 +1,8 @@
 import { describe, expect, it } from 'vitest';
 import { afterRemedy, carrierFinding, findingsAbout } from './verdicts';
 
+const narrow = { name: 'acquire', noiseBandwidth: 0.004 };
+
 describe('acquisition.ambiguity', () => {
   it('passes ±77.5 kHz at 27.5 MBd', () => {
     const finding = carrierFinding('acquisition.ambiguity');
@@ -68,6 +70,31 @@ describe('acquisition.integrator-range', () => {
   });
 });
 
+describe('acquisition.pull-in-range', () => {
+  // By hand, for the first harmonic: QPSK with D = 3 turns round at Rs/(4·4·3.5) = 491 kHz at 27.5 MBd; the others move
+  // that by a few per cent.
+  it('rests far inside the range', () => {
+    const finding = carrierFinding('acquisition.pull-in-range', { carrier: { stages: [narrow] } });
+    expect(finding).toMatchObject({ severity: 'pass', estimate: true, unit: 'kHz' });
+    expect(Math.abs(finding.limit! / 491 - 1)).toBeLessThan(0.05);
+  });
+
+  it.each([
+    [420e3, 'caution'],
+    [520e3, 'fail'],
+  ])('fires at ±%d Hz: %s', (dopplerHz, severity) => {
+    const environment = { carrierTolerancePpm: 0, dopplerHz };
+    const finding = carrierFinding('acquisition.pull-in-range', { carrier: { stages: [narrow] }, environment });
+    expect(finding).toMatchObject({ severity, title: 'The delay turns the pull-in round' });
+    expect(finding.remedy).toContain('2.4');
+  });
+
+  it('says nothing where no cycle slips', () => {
+    const environment = { carrierTolerancePpm: 0, dopplerHz: 1e3 };
+    expect(findingsAbout('acquisition.pull-in-range', { environment })).toEqual([]);
+  });
+});
+
 describe('acquisition.pull-in', () => {
   it('passes the sample link, as an estimate', () => {
     expect(carrierFinding('acquisition.pull-in')).toMatchObject({ severity: 'pass', estimate: true, limit: 8000 });
@@ -89,9 +116,9 @@ describe('acquisition.pull-in', () => {
   it('does not type a bandwidth that no gains make with the delay', () => {
     const stages = [{ name: 'acquire', damping: 2, noiseBandwidth: 0.0006 }];
     const finding = carrierFinding('acquisition.pull-in', {
-      environment: { carrierTolerancePpm: 150 },
+      environment: { carrierTolerancePpm: 60 },
       carrier: { updateInterval: 4, delay: 1, method: 'exact', stages },
-      limits: { acquisitionSymbols: 6000 },
+      limits: { acquisitionSymbols: 2000 },
     });
     expect(finding).toMatchObject({
       severity: 'caution',
