@@ -2,6 +2,7 @@ import type { LoopDesign } from '../model/design';
 import { carrierBudget } from '../budget/carrier-budget';
 import { carrierAcquisition } from '../budget/loop-acquisition';
 import { carrierDetector } from '../detectors/carrier';
+import { largestSample } from '../detectors/largest-sample';
 import { errorStatistics, sCurve } from '../detectors/detector';
 import type { DetectorModel } from '../detectors/detector';
 import { carrierHeadroom, frequencyResolutionHz, largestOffsetHeldHz } from '../fixed-point/headroom';
@@ -19,10 +20,7 @@ import type { StageLoop } from '../loop/stage-loop';
 export function carrierLoop(plan: CompletePlan, carrier: CompleteCarrier): LoopDesign {
   const { signal } = plan;
   const updateRateHz = signal.symbolRateBd / carrier.updateInterval;
-  const model = carrierDetector(carrier.detector, signal.modulation, {
-    amplitude: signal.amplitude,
-    esN0: 10 ** (signal.esN0Db / 10),
-  });
+  const model = carrierDetector(carrier.detector, { ...signal, esN0: 10 ** (signal.esN0Db / 10) });
   const stages = solveStages('carrier', carrier, signal.symbolRateBd);
   const detectorGain = averagedSymbols(carrier.updateInterval) * model.gain;
   const words = carrierWords({ signal, carrier, detectorGain, stages: wordStages(stages) });
@@ -68,7 +66,7 @@ function headroomOf({ signal, environment }: CompletePlan, words: CarrierWords, 
     words,
     symbolRateBd: signal.symbolRateBd,
     amplitude: signal.amplitude,
-    peak: 1,
+    peak: largestSample(signal),
     esN0Db: signal.esN0Db,
     largestOffsetHz: askedOffsetHz(environment) ?? 0,
     stageNames: carrier.stages.map(({ name }) => name),

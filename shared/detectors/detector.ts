@@ -1,3 +1,5 @@
+import { nullsOf } from './nulls';
+
 /** One error detector on one modulation, worked out at the operating point for one evaluation per symbol. */
 export interface DetectorModel {
   /** Slope Kd at lock with noise: detector units per radian (carrier) or per symbol (clock). */
@@ -31,6 +33,18 @@ export const varianceOf = ({ covariance }: DetectorModel): number | null => cova
 export const spectrumAtZero = ({ covariance }: DetectorModel): number | null =>
   covariance && covariance.slice(1).reduce((sum, value) => sum + 2 * value, covariance[0] ?? 0);
 
+/** The same function of a model, worked out once for each. */
+function once<T>(of: (model: DetectorModel) => T): (model: DetectorModel) => T {
+  const done = new WeakMap<DetectorModel, T>();
+  return (model) => {
+    const value = done.get(model) ?? of(model);
+    done.set(model, value);
+    return value;
+  };
+}
+
+const nulls = once(nullsOf);
+
 /**
  * What is known of the error at lock.
  *
@@ -44,7 +58,7 @@ export function errorStatistics(model: DetectorModel, counted: number) {
     spectrumAtZero: spectrum === null ? null : counted * spectrum,
     selfNoise: variance === null ? null : counted * (model.selfCovariance[0] ?? 0),
     amplitudeExponent: model.amplitudeExponent,
-    nulls: [],
+    nulls: nulls(model),
   };
 }
 
@@ -69,13 +83,17 @@ const sines = Array.from({ length: harmonics }, (_, n) =>
 
 /** The S-curve over one period, centred on lock. */
 export function sCurve(model: DetectorModel, scale: number) {
-  const x = Array.from({ length: curvePoints }, (_, i) => model.period * (i / (curvePoints - 1) - 0.5));
-  const along = (curve: (x: number) => number) => x.map((value) => scale * curve(value));
-  return { x, noiseless: along(model.noiseless), noisy: along(model.noisy) };
+  const { x, noiseless, noisy } = unitCurve(model);
+  return { x, noiseless: noiseless.map((value) => scale * value), noisy: noisy.map((value) => scale * value) };
 }
 
+const unitCurve = once(({ period, noiseless, noisy }) => {
+  const x = Array.from({ length: curvePoints }, (_, i) => period * (i / (curvePoints - 1) - 0.5));
+  return { x, noiseless: x.map(noiseless), noisy: x.map(noisy) };
+});
+
 /** Shape of the S-curve with noise, over its slope at lock. */
-export function sCurveShape({ noisy, gain, period }: DetectorModel): SCurveShape {
+export const sCurveShape = once(({ noisy, gain, period }: DetectorModel): SCurveShape => {
   const s = Array.from({ length: shapePoints }, (_, i) => noisy(period * ((i + 0.5) / shapePoints - 0.5)) / gain);
   const mean = (of: (value: number, i: number) => number) =>
     s.reduce((sum, value, i) => sum + of(value, i), 0) / shapePoints;
@@ -84,4 +102,4 @@ export function sCurveShape({ noisy, gain, period }: DetectorModel): SCurveShape
   // The rest of the series counts as one more harmonic.
   const rest = Math.max(0, meanSquare - powers.reduce((sum, power) => sum + power, 0));
   return { largest: Math.max(...s), meanSquare, powers: [...powers, rest] };
-}
+});

@@ -1,5 +1,6 @@
 import type { CarrierWords, ClockWords, OverflowByNode, StageGainWords } from '../model/words';
 import { ParameterError, requirePositive } from '../parameter-error';
+import { ringRatiosOf } from '../detectors/modulations';
 import { detectorLsbLog2 } from './datapath/phase-detector';
 import { timingLsbLog2 } from './datapath/timing-detector';
 import { exactRatio, floorOf, nearestOf, product, quotient, type Ratio } from './exact-ratio';
@@ -138,11 +139,13 @@ function detectorWords(detector: CarrierWords['detector'], signal: WordSignal) {
     return { detector, power, powerSign: sign };
   }
   if (detector === 'costas' || detector === 'sign') return { detector, modulation };
-  const rings = signal.ringRatios && modulation.endsWith('apsk') ? { ringRatios: signal.ringRatios } : {};
+  const ringRatios = ringRatiosOf(upperCase(signal.modulation), signal.ringRatios);
+  const rings = ringRatios.length > 0 ? { ringRatios: [...ringRatios] } : {};
   return { detector, modulation, amplitude: signal.amplitude, ...rings };
 }
 
 const lowerCase = (modulation: WordSignal['modulation']): Modulation => modulation.toLowerCase() as Modulation;
+const upperCase = (modulation: WordSignal['modulation']) => modulation.toUpperCase() as Uppercase<Modulation>;
 
 function updateRate(pointer: string, interval: number): { symbolsPerUpdate: number; updatesPerSymbol: number } {
   if (Number.isInteger(interval) && interval >= 1) return { symbolsPerUpdate: interval, updatesPerSymbol: 1 };

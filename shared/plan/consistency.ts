@@ -1,13 +1,15 @@
+import { ringRatiosOf } from '../detectors/modulations';
 import { ParameterError } from '../parameter-error';
 import type { CompletePlan } from './complete';
 
 /**
- * What a plan must keep beyond its schema: values that have to fit one another.
+ * What a plan must keep beyond its schema: values that have to fit one another, ring ratios their modulation.
  *
  * @throws {ParameterError} with a JSON pointer into the plan
  */
 export function requireConsistent(plan: CompletePlan): void {
   for (const key of ['carrier', 'clock'] as const) requireDistinctStages(key, plan[key]?.stages ?? []);
+  ringRatiosOf(plan.signal.modulation, plan.signal.ringRatios);
   requireRisingOffsets(plan.environment.phaseNoise ?? []);
   if (plan.clock?.interpolator === 'polyphase') {
     throw new ParameterError('/clock/interpolator', 'polyphase is not worked out yet; take cubic');

@@ -5,7 +5,8 @@ const modulationsOf: Record<string, readonly string[]> = {
   costas: ['BPSK'],
   sign: ['BPSK', 'QPSK', 'OQPSK'],
   decision: [...psk, '16QAM', '64QAM', '16APSK', '32APSK'],
-  'power-law': psk,
+  'power-law': [...psk, '16QAM', '64QAM'],
+  'known-symbols': [...psk, '16QAM', '64QAM', '16APSK', '32APSK'],
 };
 
 /** Carrier detectors that a modulation rules out. */

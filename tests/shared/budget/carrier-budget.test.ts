@@ -14,7 +14,7 @@ const nominal = (bandwidth: number, delay = 0, averaged = 1) =>
     delay,
     averaged,
   });
-const model = carrierDetector('sign', 'QPSK', { amplitude: 1, esN0: 10 });
+const model = carrierDetector('sign', { modulation: 'QPSK', rollOff: 0.35, amplitude: 1, esN0: 10 });
 const budgetOf = (
   bandwidth: number,
   delay: number,
@@ -44,7 +44,7 @@ describe('thermalVariance', () => {
   // BPSK Costas loop: (BnT/γ)·(1 + 1/(2γ)).
   it('has the squaring loss of the Costas loop', () => {
     const loop = nominal(0.01);
-    const costas = carrierDetector('costas', 'BPSK', { amplitude: 2, esN0: 10 });
+    const costas = carrierDetector('costas', { modulation: 'BPSK', rollOff: 0.35, amplitude: 2, esN0: 10 });
     expect(thermalVariance(loop, costas, 1)).toBeCloseTo(((noiseBandwidth(loop) as number) / 10) * 1.05, 12);
   });
 

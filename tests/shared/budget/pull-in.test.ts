@@ -12,7 +12,7 @@ const sine = (symmetry: number): [powers: number[], period: number] => [
   (2 * Math.PI) / symmetry,
 ];
 const shapeOf = (esN0: number): [powers: number[], period: number] => {
-  const model = carrierDetector('sign', 'QPSK', { amplitude: 1, esN0 });
+  const model = carrierDetector('sign', { modulation: 'QPSK', rollOff: 0.35, amplitude: 1, esN0 });
   return [sCurveShape(model).powers, model.period];
 };
 

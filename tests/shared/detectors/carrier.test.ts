@@ -1,12 +1,16 @@
 import { describe, expect, it } from 'vitest';
-import { carrierDetector } from '../../../shared/detectors/carrier';
+import { carrierDetector, carrierDetectorsFor } from '../../../shared/detectors/carrier';
 import { sCurve, sCurveShape, varianceOf } from '../../../shared/detectors/detector';
+import { rotationalSymmetry } from '../../../shared/detectors/modulations';
+import type { Modulation } from '../../../shared/detectors/modulations';
 import { overNoise } from './quadrature';
 
 const ratio = (decibels: number): number => 10 ** (decibels / 10);
-const qpsk = (decibels: number, amplitude = 1) => carrierDetector('sign', 'QPSK', { amplitude, esN0: ratio(decibels) });
+const signalOf = (modulation: Modulation, decibels: number, amplitude = 1) =>
+  ({ modulation, amplitude, esN0: ratio(decibels), rollOff: 0.35 }) as const;
+const qpsk = (decibels: number, amplitude = 1) => carrierDetector('sign', signalOf('QPSK', decibels, amplitude));
 const bpsk = (detector: 'sign' | 'costas', decibels: number, amplitude = 1) =>
-  carrierDetector(detector, 'BPSK', { amplitude, esN0: ratio(decibels) });
+  carrierDetector(detector, signalOf('BPSK', decibels, amplitude));
 
 describe('sign detector on QPSK', () => {
   // Derived after U. Mengali, A. D'Andrea 1997; unit amplitude.
@@ -98,14 +102,59 @@ describe('detectors on BPSK', () => {
 });
 
 describe('carrierDetector', () => {
+  const modulations = Object.keys(rotationalSymmetry) as Modulation[];
+  const pairs = modulations.flatMap((modulation) =>
+    carrierDetectorsFor(modulation).map((detector) => [detector, modulation] as const),
+  );
+
   it.each([
-    ['decision', 'QPSK', '/carrier/detector', 'decision is not worked out yet for QPSK; take sign'],
-    ['costas', 'QPSK', '/carrier/detector', 'costas is for BPSK only; take sign'],
-    ['power-law', 'BPSK', '/carrier/detector', 'power-law is not worked out yet for BPSK; take sign or costas'],
-    ['sign', '8PSK', '/signal/modulation', '8PSK is not worked out yet; take BPSK or QPSK'],
-  ] as const)('refuses %s on %s and says what to take', (detector, modulation, parameter, message) => {
-    const make = (): unknown => carrierDetector(detector, modulation, { amplitude: 1, esN0: 10 });
-    expect(make).toThrow(expect.objectContaining({ parameter, message }));
+    ['costas', 'QPSK', 'costas is for BPSK only; take sign or decision or power-law or known-symbols'],
+    ['costas', '16QAM', 'costas is for BPSK only; take decision or power-law or known-symbols'],
+    [
+      'sign',
+      '8PSK',
+      'sign tells the rails apart by sign alone, too little for 8PSK; take decision or power-law or known-symbols',
+    ],
+    [
+      'decision',
+      'OQPSK',
+      'decision needs both rails at one strobe, and those of OQPSK lie half a symbol apart; take sign',
+    ],
+    [
+      'power-law',
+      '16APSK',
+      'the fourth powers of 16APSK cancel but for its innermost ring; take decision or known-symbols',
+    ],
+  ] as const)('refuses %s on %s and says what to take', (detector, modulation, message) => {
+    const make = (): unknown => carrierDetector(detector, signalOf(modulation, 10));
+    expect(make).toThrow(expect.objectContaining({ parameter: '/carrier/detector', message }));
+  });
+
+  it('refuses decisions that leave no slope', () => {
+    const make = (): unknown => carrierDetector('decision', signalOf('32APSK', -5));
+    expect(make).toThrow(expect.objectContaining({ parameter: '/signal/esN0Db' }));
+  });
+
+  // Independent: the period is the symmetry's, except where symbols are known; odd; slope by differences.
+  it.each(pairs)('%s on %s has an odd curve of its period and the slope that it names', (detector, modulation) => {
+    const { noisy, noiseless, period, gain, gainWithoutNoise } = carrierDetector(
+      detector,
+      signalOf(modulation, 9, 1.3),
+    );
+    expect(period).toBeCloseTo((2 * Math.PI) / (detector === 'known-symbols' ? 1 : rotationalSymmetry[modulation]), 14);
+    for (const x of [0.03, 0.17, 0.31]) {
+      expect(noisy(-x)).toBeCloseTo(-noisy(x), 10);
+      expect(noisy(x + period)).toBeCloseTo(noisy(x), 10);
+      expect(noiseless(x + period)).toBeCloseTo(noiseless(x), 10);
+    }
+    expect(Math.abs((noisy(1e-4) - noisy(-1e-4)) / 2e-4 / gain - 1)).toBeLessThan(1e-5);
+    expect((noiseless(1e-4) - noiseless(-1e-4)) / 2e-4 / gainWithoutNoise).toBeCloseTo(1, 5);
+  });
+
+  it.each(pairs)('%s on %s loses its noise with growing Es/N0', (detector, modulation) => {
+    const { noisy, noiseless, gain, gainWithoutNoise, period } = carrierDetector(detector, signalOf(modulation, 100));
+    expect(gain).toBeCloseTo(gainWithoutNoise, 6);
+    for (const share of [0.11, 0.23, 0.41]) expect(noisy(share * period)).toBeCloseTo(noiseless(share * period), 4);
   });
 });
 

@@ -1,0 +1,110 @@
+import { sineSeries } from '../math/sine-series';
+import { ParameterError } from '../parameter-error';
+import { railCurve, railSlope, railVariance } from './carrier-decision-rails';
+import { regionCurve, regionSlope, regionVariance } from './carrier-decision-regions';
+import { decisionRegions, nearestIndex, stretchedRegions } from './decision-regions';
+import type { DetectorModel } from './detector';
+import { distinctPoints, largestMagnitude, pointsOf, rotationalSymmetry } from './modulations';
+import type { Modulation } from './modulations';
+import { scaledModel } from './carrier-signal';
+import type { CarrierSignal } from './carrier-signal';
+import { signBpsk, signQpsk } from './carrier-sign';
+
+/** Im(z · conj â) at unit amplitude. */
+interface Decision {
+  curve: (x: number) => number;
+  variance: number;
+  /** Slope at lock when the thresholds stand `stretch` times farther out than half-way between the points. */
+  slope: (stretch: number) => number;
+}
+
+/** Slope that is too little to lock on, over that without noise; the sums here carry some 1e-10. */
+const leastSlope = 1e-6;
+/** Harmonics beyond which a series takes longer than the curve itself, whose borders are then mostly out of reach. */
+const mostHarmonics = 64;
+/** Error of the gain control over which the change of the slope is taken, either way, dB. */
+const amplitudeStepDb = 0.5;
+
+/** Im(z · conj â), â the nearest point: on BPSK the sign detector itself, on QPSK the same over √2. */
+export function decision(signal: CarrierSignal): DetectorModel {
+  if (signal.modulation === 'BPSK') return signBpsk(signal);
+  if (signal.modulation === 'QPSK') return scaledModel(signQpsk(signal), Math.SQRT1_2);
+  return scaledModel(unitDecision(signal), signal.amplitude);
+}
+
+/**
+ * The same where the points have several magnitudes or more than two rails' signs, for A = 1.
+ *
+ * The thresholds stand where the plan's amplitude A puts them, so a signal that comes in larger than A is judged by
+ * thresholds too far in. `amplitudeExponent` is the change of the slope with the signal's real amplitude, noise and
+ * signal together, over half a decibel either way: 1 where decisions are right, anything at low Es/N0.
+ *
+ * @throws {ParameterError} pointing at Es/N0 where so many decisions are wrong that no slope is left
+ */
+function unitDecision({ modulation, esN0, ringRatios }: CarrierSignal): DetectorModel {
+  const { curve, variance, slope } = decisionOf(modulation, Math.sqrt(1 / (2 * esN0)), ringRatios);
+  const gain = slope(1);
+  if (!(gain > leastSlope)) {
+    throw new ParameterError(
+      '/signal/esN0Db',
+      `at this Es/N0 decision has no slope on ${modulation}, too many decisions are wrong; raise it or take known-symbols`,
+    );
+  }
+  const period = (2 * Math.PI) / rotationalSymmetry[modulation];
+  return {
+    gain,
+    gainWithoutNoise: 1,
+    period,
+    covariance: [variance],
+    selfCovariance: [],
+    amplitudeExponent: exponentOf(slope, gain),
+    noisy: shortened(curve, period, harmonics(modulation, esN0, ringRatios)),
+    noiseless: noiselessCurve(modulation, ringRatios),
+  };
+}
+
+function decisionOf(modulation: Modulation, deviation: number, ringRatios: CarrierSignal['ringRatios']): Decision {
+  if (modulation === '16QAM' || modulation === '64QAM') {
+    const rail = { side: modulation === '16QAM' ? 4 : 8, deviation, stretch: 1 };
+    return {
+      curve: (x) => railCurve(rail, x),
+      variance: railVariance(rail),
+      slope: (stretch) => railSlope({ ...rail, stretch }),
+    };
+  }
+  const decided = pointsOf(modulation, ringRatios);
+  const regions = decisionRegions(decided);
+  const parts = { regions, decided, sent: distinctPoints(modulation, ringRatios), deviation };
+  return {
+    curve: (x) => regionCurve(parts, x),
+    variance: regionVariance(parts),
+    slope: (stretch) => regionSlope({ ...parts, regions: stretchedRegions(regions, stretch) }),
+  };
+}
+
+/** A signal g times as large sees thresholds 1/g as far out, and gives errors g times as large. */
+function exponentOf(slope: (stretch: number) => number, gain: number): number {
+  const step = 10 ** (amplitudeStepDb / 20);
+  return (step * slope(1 / step) - slope(step) / step) / (gain * 2 * Math.log(step));
+}
+
+/** Harmonics that the noise leaves above 1e-11: each point's phase is smeared by 1/(|a|√(2γ)) rad. */
+const harmonics = (modulation: Modulation, esN0: number, ringRatios: CarrierSignal['ringRatios']): number =>
+  4 + Math.ceil((10.5 * largestMagnitude(modulation, ringRatios) * Math.sqrt(esN0)) / rotationalSymmetry[modulation]);
+
+const shortened = (curve: (x: number) => number, period: number, count: number) =>
+  count > mostHarmonics ? curve : sineSeries(curve, period, count + 1);
+
+function noiselessCurve(modulation: Modulation, ringRatios: CarrierSignal['ringRatios']): (x: number) => number {
+  const points = pointsOf(modulation, ringRatios);
+  const sent = distinctPoints(modulation, ringRatios);
+  return (x) => {
+    const [cos, sin] = [Math.cos(x), Math.sin(x)];
+    const errors = sent.map(([aI, aQ]) => {
+      const [i, q] = [aI * cos - aQ * sin, aI * sin + aQ * cos];
+      const [dI, dQ] = points[nearestIndex(points, i, q)]!;
+      return q * dI - i * dQ;
+    });
+    return errors.reduce((sum, error) => sum + error, 0) / sent.length;
+  };
+}
