@@ -38,7 +38,7 @@ export function runTrial(
   const { words, tables, check } = job;
   const { offsetHz, esN0Db } = pointAt(job, pointIndex);
   const random = new TrialRandom({ seed: check.seed, point: pointIndex, trial });
-  const source = symbolSource(job.modulation.toLowerCase());
+  const source = symbolSource(job.modulation.toLowerCase(), words.ringRatios);
   const firstTurns = random.fraction();
   const offsetTurns = offsetHz / job.symbolRateBd;
   const centreTurns = (words.nco.stepsPerSymbol * toNumber(words.nco.fcw)) / 2 ** words.nco.widthBits;

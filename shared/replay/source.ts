@@ -9,11 +9,14 @@ export interface SymbolSource {
   draw(random: TrialRandom, count: number, indices: Uint8Array): void;
 }
 
-/** @param modulation one whose number of points is a power of two, lower case */
-export function symbolSource(modulation: string): SymbolSource {
+/**
+ * @param modulation one whose number of points is a power of two, lower case
+ * @param ringRatios of an APSK constellation, as in the words
+ */
+export function symbolSource(modulation: string, ringRatios?: readonly number[]): SymbolSource {
   // A cosine may differ in its last bit between engines; cut to 2^−40 the points are the same everywhere.
   const portable = (value: number) => Math.floor(value * 2 ** 40 + 0.5) / 2 ** 40;
-  const points = constellation(modulation).map(([i, q]): Point => [portable(i), portable(q)]);
+  const points = constellation(modulation, ringRatios).map(([i, q]): Point => [portable(i), portable(q)]);
   const bits = Math.log2(points.length);
   const perWord = Math.floor(32 / bits);
   return {
