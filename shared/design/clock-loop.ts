@@ -8,6 +8,7 @@ import { clockWords } from '../fixed-point/words';
 import type { ClockWords } from '../fixed-point/words';
 import type { CompleteClock, CompletePlan } from '../plan/complete';
 import { askedErrorPpm } from '../plan/required-offset';
+import { ParameterError } from '../parameter-error';
 import { requireLimit, solveStages, stageDesigns, wordStages } from './loop-design';
 import { averagedSymbols } from '../loop/stage-loop';
 
@@ -16,7 +17,7 @@ export function clockLoop(plan: CompletePlan, clock: CompleteClock): LoopDesign 
   const { signal } = plan;
   const { symbolRateBd, samplesPerSymbol } = signal;
   const updateRateHz = symbolRateBd / clock.updateInterval;
-  const model = clockDetector(clock.detector, signal);
+  const model = clockDetector(clock.detector, { ...signal, esN0: 10 ** (signal.esN0Db / 10) });
   const stages = solveStages('clock', clock, symbolRateBd);
   const counted = averagedSymbols(clock.updateInterval);
   const detectorGain = counted * model.gain;
@@ -62,11 +63,19 @@ export function clockLoop(plan: CompletePlan, clock: CompleteClock): LoopDesign 
   };
 }
 
-/** The words know only what the datapath does; what it does not has been refused before. */
+/**
+ * The words know only what the datapath does.
+ *
+ * @throws {ParameterError} for a detector that has no integer form
+ */
 function realisable(clock: CompleteClock) {
+  const { detector } = clock;
+  if (detector === 'early-late') {
+    throw new ParameterError('/clock/detector', 'early-late has no integer datapath; take gardner');
+  }
   return {
     ...clock,
-    detector: clock.detector as ClockWords['detector'],
+    detector,
     interpolator: clock.interpolator as ClockWords['interpolator'],
   };
 }

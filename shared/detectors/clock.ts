@@ -1,58 +1,107 @@
+import { boundedMemo } from '../math/bounded-memo';
 import { ParameterError } from '../parameter-error';
 import type { CompleteClock } from '../plan/complete';
+import { requireSense } from './clock-sense';
+import type { ClockSignal } from './clock-signal';
 import type { DetectorModel } from './detector';
-import type { Modulation } from './modulations';
+import { railsOf } from './rails';
+import { gardnerSlope, signCurve, signSlope } from './sign-timing';
+import { earlyLateOffset, timingCovariance } from './timing-covariance';
+import type { TimingSignal } from './timing-covariance';
 
-export interface ClockSignal {
-  modulation: Modulation;
-  amplitude: number;
-  /** Roll-off α of the raised-cosine pulse, 0 to 1. */
-  rollOff: number;
-  samplesPerSymbol: number;
+export type { ClockSignal } from './clock-signal';
+export { gardnerSlope } from './sign-timing';
+
+export type TimingDetectorName = CompleteClock['detector'];
+
+interface Timing {
+  detector: TimingDetectorName;
+  signal: ClockSignal;
 }
 
+const keyOf = ({ detector, signal }: Timing): string => {
+  const { modulation, ringRatios, rollOff, amplitude, esN0 } = signal;
+  return JSON.stringify([detector, modulation, ringRatios, rollOff, amplitude, esN0]);
+};
+
+const models = boundedMemo(modelOf, keyOf, 32);
+
 /**
- * The timing detector of a clock loop; x is how early the strobe comes, symbols.
+ * The timing detector of a clock loop at its operating point, both rails added; x is how early the strobe comes,
+ * symbols, and the slope at lock is positive. The whole curve is periodic in one symbol.
  *
- * @throws {ParameterError} pointing at what is not worked out, or at a signal on which the detector has no slope
+ * @throws {ParameterError} pointing at the detector or at the signal on which it has no slope, with what to take instead
  */
-export function clockDetector(detector: CompleteClock['detector'], signal: ClockSignal): DetectorModel {
-  if (detector !== 'gardner') {
-    throw new ParameterError('/clock/detector', `${detector} is not worked out yet; take gardner`);
-  }
-  if (signal.modulation === 'OQPSK') {
-    throw new ParameterError('/signal/modulation', 'clock recovery of OQPSK is not worked out yet; take QPSK');
-  }
-  if (signal.samplesPerSymbol < 2) {
-    throw new ParameterError('/signal/samplesPerSymbol', 'gardner needs at least 2 samples per symbol');
-  }
-  if (signal.rollOff === 0) {
-    throw new ParameterError('/signal/rollOff', 'gardner has no slope at roll-off 0; take a roll-off above 0');
-  }
-  return gardner(signal);
+export function clockDetector(detector: TimingDetectorName, signal: ClockSignal): DetectorModel {
+  requireSense(detector, signal);
+  return models({ detector, signal });
 }
 
-/** Slope of the Gardner detector at lock over A², both rails added, per symbol: 2 sin(πα/2)/(1 − α²/4). */
-export const gardnerSlope = (rollOff: number): number =>
-  (2 * Math.sin((Math.PI * rollOff) / 2)) / (1 - rollOff ** 2 / 4);
-
-/**
- * Re m*(y′ − y), m half-way between the strobes: a sine of one symbol's period, whatever the noise. Its error is
- * coloured, so no variance is given here that a flat spectrum could be made of.
- *
- * @see F. Gardner, "A BPSK/QPSK timing-error detector for sampled receivers", 1986
- */
-function gardner({ amplitude, rollOff }: ClockSignal): DetectorModel {
-  const gain = amplitude ** 2 * gardnerSlope(rollOff);
-  const curve = (x: number): number => (gain / (2 * Math.PI)) * Math.sin(2 * Math.PI * x);
+function modelOf({ detector, signal }: Timing): DetectorModel {
+  const { amplitude, esN0, rollOff } = signal;
+  const clean = { rails: railsOf(signal.modulation, signal.ringRatios), rollOff, variance: 0 };
+  const noisy = { ...clean, variance: 1 / (2 * esN0) };
+  const squared = detector === 'gardner' || detector === 'early-late';
+  const scale = squared ? amplitude ** 2 : amplitude;
+  const powers = (values: readonly number[]) => values.map((value) => scale ** 2 * value);
   return {
-    gain,
-    gainWithoutNoise: gain,
+    ...(squared ? sine(detector, rollOff, scale) : signDetector(detector, { clean, noisy, scale, signal })),
     period: 1,
-    covariance: null,
-    selfCovariance: [],
-    amplitudeExponent: 2,
-    noisy: curve,
-    noiseless: curve,
+    covariance: powers(timingCovariance(detector, noisy)),
+    selfCovariance: powers(timingCovariance(detector, clean)),
+    amplitudeExponent: squared ? 2 : 1,
   };
 }
+
+type Curve = Pick<DetectorModel, 'gain' | 'gainWithoutNoise' | 'noisy' | 'noiseless'>;
+
+/**
+ * Slope of |y(+δ)|² − |y(−δ)|² at lock over A², both rails added, per symbol: πα sin 2πδ.
+ *
+ * @see U. Mengali, A. D'Andrea, "Synchronization Techniques for Digital Receivers", 1997, for early-late detectors
+ */
+export const earlyLateSlope = (rollOff: number): number => Math.PI * rollOff * Math.sin(2 * Math.PI * earlyLateOffset);
+
+/** Detectors of second order see the one line that the signal's power has at the symbol rate: a sine, whatever the noise. */
+function sine(detector: 'gardner' | 'early-late', rollOff: number, scale: number): Curve {
+  const gain = scale * (detector === 'gardner' ? gardnerSlope(rollOff) : earlyLateSlope(rollOff));
+  const curve = (x: number): number => (gain / (2 * Math.PI)) * Math.sin(2 * Math.PI * x);
+  return { gain, gainWithoutNoise: gain, noisy: curve, noiseless: curve };
+}
+
+interface Signs {
+  clean: TimingSignal;
+  noisy: TimingSignal;
+  scale: number;
+  signal: ClockSignal;
+}
+
+/** Slope, over that without noise, below which decisions no longer tell early from late. */
+const leastShare = 0.01;
+
+function signDetector(detector: 'zero-crossing' | 'mueller-muller', { clean, noisy, scale, signal }: Signs): Curve {
+  const [slope, without] = [signSlope(detector, noisy), signSlope(detector, clean)];
+  if (!(slope > leastShare * without)) {
+    throw new ParameterError(
+      '/signal/esN0Db',
+      `at this Es/N0 the signs of ${signal.modulation} leave ${detector} no slope; take gardner`,
+    );
+  }
+  const curve = signCurve(detector, noisy);
+  const cleanCurve = () => cleanCurves({ detector, timing: clean, signal });
+  return {
+    gain: scale * slope,
+    gainWithoutNoise: scale * without,
+    noisy: (x) => scale * curve(x),
+    noiseless: (x) => scale * cleanCurve()(x),
+  };
+}
+
+/** Curves without noise, which no Es/N0 changes. */
+const cleanCurves = boundedMemo(
+  ({ detector, timing }: { detector: 'zero-crossing' | 'mueller-muller'; timing: TimingSignal; signal: ClockSignal }) =>
+    signCurve(detector, timing),
+  ({ detector, signal: { modulation, ringRatios, rollOff } }) =>
+    JSON.stringify([detector, modulation, ringRatios, rollOff]),
+  32,
+);

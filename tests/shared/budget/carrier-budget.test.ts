@@ -56,7 +56,8 @@ describe('thermalVariance', () => {
   });
 
   it('is not known for coloured errors, nor for an unstable loop', () => {
-    const gardner = clockDetector('gardner', { modulation: 'QPSK', amplitude: 1, rollOff: 0.35, samplesPerSymbol: 2 });
+    const signal = { modulation: 'QPSK', amplitude: 1, esN0: 10, rollOff: 0.35, samplesPerSymbol: 2 } as const;
+    const gardner = clockDetector('gardner', signal);
     expect(jitterVariance(nominal(0.01), gardner, 1, null)).toEqual({ thermal: null, oscillator: null, total: null });
     expect(thermalVariance(nominal(0.05, 20), model, 1)).toBeNull();
   });
