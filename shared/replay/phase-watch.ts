@@ -31,9 +31,15 @@ export interface TrialResult {
 export const settledSymbols = (symbols: number): number => Math.floor(symbols / 5);
 
 /**
+ * Mean error of a loop that is locked, periods, at most: decided points have false nulls further off (16QAM at a third
+ * of a period), and drift or a rounded word never holds a loop that far from its own.
+ */
+const largestBias = 0.2;
+
+/**
  * Watches the true phase error of a trial. A loop that sees one sample a symbol cannot tell an error that moves by
  * whole periods from one that rests, so the error is followed modulo whole periods per symbol: what rests in the
- * settled part is quiet, and the settled frequency then tells lock from false lock.
+ * settled part is quiet, and the settled frequency and the mean error then tell lock from false lock.
  */
 export class PhaseWatch {
   /** Phase error in periods, followed without jumps. */
@@ -97,9 +103,9 @@ export class PhaseWatch {
     const residualTurns = turnsPerSymbol - (this.advanced / count) * turnsPerLsb;
     const centre = this.null0;
     const quiet = this.largest - centre < 0.5 && this.least - centre >= -0.5;
-    const outcome = quiet ? (Math.abs(residualTurns * power) < 0.5 ? 'locked' : 'false-lock') : 'unlocked';
+    const sound = Math.abs(residualTurns * power) < 0.5 && Math.abs(this.sum / count - centre) < largestBias;
     return {
-      outcome,
+      outcome: quiet ? (sound ? 'locked' : 'false-lock') : 'unlocked',
       lockTimeSymbols: this.lastChange,
       residualTurns,
       errorSum: this.sum - count * centre,

@@ -59,6 +59,6 @@ export function traceSentence({ outcome, lockedAtSymbol, symbols }: ReplayTrace)
   if (outcome === 'locked')
     return `Locked at symbol ${numberText(lockedAtSymbol ?? 0)} of ${of}, and it holds to the end.`;
   if (outcome === 'false-lock')
-    return `The error is quiet at the end of ${of}, but the frequency is wrong: false lock.`;
+    return `The error is quiet at the end of ${of}, but the frequency or the phase is wrong: false lock.`;
   return `Not locked within ${of}.`;
 }

@@ -68,11 +68,11 @@ export function requiredText({ check, points }: Replay, requiredHz: number, scal
   return `Inside the required ±${numberText(scale.of(requiredHz))} ${scale.unit}: ${counts.join(', ')}.`;
 }
 
-/** Says that trials held a wrong frequency with a quiet error, which a lock detector alone would take for lock. */
+/** Says that trials held a wrong frequency or phase with a quiet error, which a lock detector alone would take for lock. */
 export function falseLockText(points: readonly ReplayPoint[]): string | undefined {
   const hit = points.filter(({ falseLocks }) => falseLocks > 0);
   const trials = hit.reduce((sum, { falseLocks }) => sum + falseLocks, 0);
   if (trials === 0) return undefined;
   const those = trials === 1 ? '1 trial' : `${numberText(trials)} trials`;
-  return `${those} at ${hit.length === 1 ? '1 point' : `${hit.length} points`} settled on a wrong frequency: false lock.`;
+  return `${those} at ${hit.length === 1 ? '1 point' : `${hit.length} points`} settled on a wrong frequency or phase: false lock.`;
 }

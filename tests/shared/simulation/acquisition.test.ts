@@ -1,5 +1,6 @@
 import { describe, expect, it, vi } from 'vitest';
-import { runTrial } from '../../../shared/replay/receiver';
+import { powerOf, runTrial } from '../../../shared/replay/receiver';
+import { runPoint } from '../../../shared/replay/run-point';
 import type { ReplayJob } from '../../../shared/replay/job';
 import { carrierOf, jobOf, type Link } from './link';
 
@@ -37,6 +38,18 @@ function lockTimes(job: ReplayJob): { mean: number; locks: number } {
   return { mean: times.reduce((sum, time) => sum + time, 0) / times.length, locks: times.length };
 }
 
+/** Mean phase error at the end of each trial, degrees. */
+function restingPlaces(job: ReplayJob): number[] {
+  return Array.from({ length: job.check.trials }, (_, trial) => {
+    let mean = 0;
+    runTrial(job, 0, trial, ({ errors, count }) => {
+      const near = [...errors.subarray(0, count)].map((error) => error - Math.round(error));
+      mean = near.reduce((sum, error) => sum + error, 0) / count;
+    });
+    return (mean * 360) / powerOf(job);
+  });
+}
+
 // An estimate: the range within which no trial slips lies between the sheet's value and three times it.
 describe('the lock-in range of a replay against the estimate', () => {
   it.each(links)('%j', (link) => {
@@ -70,5 +83,28 @@ describe('the pull-in time of a replay against the estimate', () => {
     const carrier = carrierOf({ ...link, environment: { dopplerHz: offsetHz } });
     expect(carrier.acquisition.pullInSymbols).toBeNull();
     expect(lockTimes(jobOf(link, carrier, { offsetHz, symbols: 30_000, trials: 6 })).locks).toBe(0);
+  });
+});
+
+// Published: 16QAM has false stable nulls near ±31°, 16APSK near ±29° (design values at high Es/N0).
+describe('the false nulls of a detector in a replay', () => {
+  it.each([
+    { modulation: '16QAM', detector: 'decision', esN0Db: 20, noiseBandwidth: 0.01 },
+    { modulation: '16APSK', detector: 'decision', esN0Db: 20, noiseBandwidth: 0.01 },
+  ])('hold some trials, which are no locks: $modulation', (link) => {
+    const carrier = carrierOf(link);
+    const stable = carrier.detector.nulls.filter((each) => each.stable && !each.lock);
+    expect(stable.length).toBeGreaterThan(0);
+    const job = jobOf(link, carrier, { symbols: 6000, trials: 60 });
+    const { locks, falseLocks, phaseBiasDeg } = runPoint(job, 0);
+    expect(falseLocks).toBeGreaterThan(0);
+    expect(locks).toBeGreaterThan(10);
+    expect(Math.abs(phaseBiasDeg!)).toBeLessThan(1);
+    // Where such trials rest on average is where the sheet has its null.
+    const rests = restingPlaces(job)
+      .map(Math.abs)
+      .filter((degrees) => degrees > 20);
+    const mean = rests.reduce((sum, degrees) => sum + degrees, 0) / rests.length;
+    expect(Math.abs(mean - (stable.at(-1)!.x * 180) / Math.PI)).toBeLessThan(2);
   });
 });

@@ -42,6 +42,6 @@ describe('traceSentence', () => {
 
   it('never calls a false lock a lock', () => {
     const sentence = traceSentence({ ...trace, outcome: 'false-lock', lockedAtSymbol: null });
-    expect(sentence).toContain('frequency is wrong: false lock');
+    expect(sentence).toContain('frequency or the phase is wrong: false lock');
   });
 });

@@ -54,7 +54,7 @@ describe('falseLockText', () => {
   it('counts trials and points', () => {
     expect(
       falseLockText([result(0, 'fail', { falseLocks: 2 }), result(1, 'pass'), result(4, 'fail', { falseLocks: 1 })]),
-    ).toBe('3 trials at 2 points settled on a wrong frequency: false lock.');
+    ).toBe('3 trials at 2 points settled on a wrong frequency or phase: false lock.');
   });
 
   it('is silent where there was none', () => {
