@@ -3,6 +3,7 @@ import type { DetectorModel } from '../detectors/detector';
 import { placedLoop } from '../loop/exact-gains';
 import { bandwidthOverOmega, nominalGains, thetaOf } from '../loop/gains';
 import { linearLoop } from '../loop/linear-loop';
+import type { ThirdOrderForm } from '../loop/third-order-form';
 import type { LinearLoop } from '../loop/linear-loop';
 import { noiseBandwidth } from '../loop/noise-bandwidth';
 import { largestBetween } from '../math/root-search';
@@ -20,6 +21,8 @@ export interface BudgetInput {
   damping: number;
   method: 'nominal' | 'exact';
   prewarp: boolean;
+  /** Analog form of order 3. */
+  form?: ThirdOrderForm;
   /** Symbols per update. */
   updateInterval: number;
   updateRateHz: number;
@@ -109,16 +112,16 @@ function sweepPoint(
 
 /** The last stage with another bandwidth: by the formula, or with its poles placed where the formula would have them. */
 function loopOfBandwidth(
-  { damping, method, prewarp }: BudgetInput,
+  { damping, method, prewarp, form }: BudgetInput,
   like: LinearLoop,
   bandwidth: number,
 ): LinearLoop | null {
-  const omegaTu = bandwidth / bandwidthOverOmega(like.order, damping);
+  const omegaTu = bandwidth / bandwidthOverOmega(like.order, damping, form);
   if (prewarp && omegaTu >= Math.PI) return null;
   const theta = thetaOf(omegaTu, prewarp);
   const { order, delay, averaged } = like;
   if (method === 'exact' && order === 2) return placedLoop({ order, damping, delay, averaged }, theta);
-  return linearLoop({ gains: nominalGains(order, { damping, theta }), delay, averaged });
+  return linearLoop({ gains: nominalGains(order, { damping, theta, form }), delay, averaged });
 }
 
 function toSweep(points: SweepPoint[]): JitterSweep {

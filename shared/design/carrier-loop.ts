@@ -33,6 +33,7 @@ export function carrierLoop(plan: CompletePlan, carrier: CompleteCarrier): LoopD
     effective: carrierGains(words, detectorGain),
     perUnit: detectorGain * oscillatorGain,
     updateRateHz,
+    amplitude: { toleranceDb: signal.amplitudeToleranceDb, exponent: model.amplitudeExponent },
   });
   const held = largestOffsetHeldHz(words, signal.symbolRateBd);
   return {
@@ -87,6 +88,7 @@ function budgetOf(plan: CompletePlan, carrier: CompleteCarrier, { model, stages,
     damping: last.damping ?? 1,
     method: carrier.method,
     prewarp: carrier.prewarp,
+    form: carrier.thirdOrder,
     updateInterval: carrier.updateInterval,
     updateRateHz,
     phaseNoise: plan.environment.phaseNoise,

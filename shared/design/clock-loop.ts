@@ -31,6 +31,7 @@ export function clockLoop(plan: CompletePlan, clock: CompleteClock): LoopDesign 
     effective: clockGains(words, detectorGain, samplesPerSymbol),
     perUnit: detectorGain * oscillatorGain,
     updateRateHz,
+    amplitude: { toleranceDb: signal.amplitudeToleranceDb, exponent: model.amplitudeExponent },
   });
   return {
     updateRateHz,

@@ -3,6 +3,7 @@ import type { StageGainWords, StoredInteger } from '../model/words';
 import type { CompleteCarrier, CompleteClock } from '../plan/complete';
 import { toNumber } from '../fixed-point/format';
 import { ParameterError } from '../parameter-error';
+import type { AmplitudeError } from '../loop/amplitude-ends';
 import { linearLoop } from '../loop/linear-loop';
 import type { LoopGains } from '../loop/linear-loop';
 import { stageDesign } from '../loop/stage-design';
@@ -50,6 +51,8 @@ export interface StageDesignsInput {
   effective: LoopGains[];
   perUnit: number;
   updateRateHz: number;
+  /** What the gain control leaves open, with the detector's answer to it. */
+  amplitude: AmplitudeError;
 }
 
 /** Every stage of one loop worked out. */
@@ -60,6 +63,7 @@ export function stageDesigns({
   effective,
   perUnit,
   updateRateHz,
+  amplitude,
 }: StageDesignsInput): StageDesign[] {
   const averaged = averagedSymbols(loop.updateInterval);
   return stages.wanted.map((wanted, i) =>
@@ -70,6 +74,7 @@ export function stageDesigns({
       words: stageWords(words[i] as StageGainWords, loop.order),
       perUnit,
       updateRateHz,
+      amplitude,
     }),
   );
 }

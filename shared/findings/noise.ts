@@ -78,6 +78,6 @@ const otherMeans = 'raise 1.5, take a quieter oscillator (4.6), or allow more (5
 function nominalBandwidth({ stage, result, loop, plan }: StageView): number {
   if (stage.noiseBandwidth !== undefined) return stage.noiseBandwidth;
   if (loop.method === 'exact') return result.noiseBandwidth.exact as number;
-  const perOmega = bandwidthOverOmega(loop.order, stage.damping ?? 1);
+  const perOmega = bandwidthOverOmega(loop.order, stage.damping ?? 1, loop.thirdOrder);
   return (2 * Math.PI * (stage.naturalFrequencyHz as number) * perOmega) / plan.signal.symbolRateBd;
 }

@@ -7,6 +7,7 @@ import { bandwidthOverOmega, nominalGains } from './gains';
 import { averagingWeight, linearLoop } from './linear-loop';
 import type { LinearLoop } from './linear-loop';
 import { noiseBandwidth } from './noise-bandwidth';
+import type { ThirdOrderForm } from './third-order-form';
 
 export interface LoopShape {
   order: number;
@@ -16,6 +17,8 @@ export interface LoopShape {
   delay: number;
   /** Symbols averaged into one update, 1 where nothing is averaged. */
   averaged: number;
+  /** Analog form of order 3; the published one where absent. */
+  form?: ThirdOrderForm | undefined;
 }
 
 /** Loop with its free frequency: θ = ωTu/2 of K, ωn or ω0. */
@@ -60,7 +63,7 @@ const isSamePair = (found: PolePair | null, wanted: PolePair): boolean =>
  */
 export function exactLoop(shape: LoopShape, wanted: number): { loop: LinearLoop; theta: number } {
   const family = familyOf(shape);
-  const start = wanted / (2 * bandwidthOverOmega(shape.order, shape.damping));
+  const start = wanted / (2 * bandwidthOverOmega(shape.order, shape.damping, shape.form));
   const bandwidthAt = (theta: number): number => bandwidthOf(family, theta);
   let upper = start;
   if (!(bandwidthAt(upper) >= wanted)) upper = widest(bandwidthAt, wanted, start);
@@ -73,7 +76,7 @@ const familyOf = (shape: LoopShape): Family =>
     ? (theta) => placedLoop(shape, theta)
     : (theta) =>
         linearLoop({
-          gains: nominalGains(shape.order, { damping: 1, theta }),
+          gains: nominalGains(shape.order, { damping: 1, theta, form: shape.form }),
           delay: shape.delay,
           averaged: shape.averaged,
         });

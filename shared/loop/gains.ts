@@ -1,8 +1,7 @@
 import { ParameterError, requirePositive } from '../parameter-error';
 import type { LoopGains } from './linear-loop';
-
-/** Order-3 analog form s³ + b3·ω0·s² + a3·ω0²·s + ω0³ and its noise bandwidth over ω0. */
-export const thirdOrderForm = { a3: 1.1, b3: 2.4, bandwidthOverOmega: 0.7845 } as const;
+import { publishedForm, thirdOrderBandwidth } from './third-order-form';
+import type { ThirdOrderForm } from './third-order-form';
 
 export interface SecondOrderPlacement {
   /** Damping factor ζ of the analog loop, above 0. */
@@ -41,11 +40,13 @@ export function secondOrderGains({ damping, theta }: SecondOrderPlacement): Loop
  * With s = (2/Tu)·w/(2 + w) the polynomial becomes, over w, w³ + c2·w² + c1·w + c0; then g3 = c0, g2 = c1 − 2c0 and
  * g1 = c2 − c1 + c0, written here without the differences.
  *
+ * g2 is above 0 for θ below a3. Every stable form of nominal bandwidth Bn·Tu up to 0.5 keeps that: with q = a3·b3 − 1 the
+ * widest θ over a3 is q/(q² + q + a3³).
+ *
  * @see E. Kaplan, C. Hegarty, "Understanding GPS", loop filter table (a3, b3)
  */
-export function thirdOrderGains(theta: number): LoopGains {
+export function thirdOrderGains(theta: number, { a3, b3 }: ThirdOrderForm = publishedForm): LoopGains {
   requirePositive({ theta });
-  const { a3, b3 } = thirdOrderForm;
   const scale = 1 + b3 * theta + a3 * theta ** 2 + theta ** 3;
   return {
     g1: (2 * b3 * theta + 2 * theta ** 3) / scale,
@@ -55,9 +56,9 @@ export function thirdOrderGains(theta: number): LoopGains {
 }
 
 /** Nominal noise bandwidth Bn·Tu over the free frequency times Tu: K, ωn or ω0 by the order. */
-export function bandwidthOverOmega(order: number, damping: number): number {
+export function bandwidthOverOmega(order: number, damping: number, form: ThirdOrderForm = publishedForm): number {
   if (order === 1) return 1 / 4;
-  return order === 2 ? (damping + 1 / (4 * damping)) / 2 : thirdOrderForm.bandwidthOverOmega;
+  return order === 2 ? (damping + 1 / (4 * damping)) / 2 : thirdOrderBandwidth(form);
 }
 
 /** θ of a free frequency ω·Tu, pre-warped or not. */
@@ -69,7 +70,10 @@ export function thetaOf(omegaTu: number, prewarp: boolean): number {
 }
 
 /** Nominal gains of an order at θ. */
-export function nominalGains(order: number, { damping, theta }: SecondOrderPlacement): LoopGains {
+export function nominalGains(
+  order: number,
+  { damping, theta, form }: SecondOrderPlacement & { form?: ThirdOrderForm | undefined },
+): LoopGains {
   if (order === 1) return firstOrderGains(theta);
-  return order === 2 ? secondOrderGains({ damping, theta }) : thirdOrderGains(theta);
+  return order === 2 ? secondOrderGains({ damping, theta }) : thirdOrderGains(theta, form);
 }

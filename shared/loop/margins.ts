@@ -55,6 +55,8 @@ export interface StabilityLimits {
   /** Ratio by which the gain may grow before the loop is unstable, below 1 for one that is; null where none is. */
   largestGain: number | null;
   crossings: GainCrossing[];
+  /** Every ratio of the gain that puts a pole on the unit circle. */
+  criticalRatios: number[];
 }
 
 export function stabilityLimits(loop: LinearLoop): StabilityLimits {
@@ -64,11 +66,17 @@ export function stabilityLimits(loop: LinearLoop): StabilityLimits {
   const delay = largestDelay(loop, crossings);
   if (!isStable(loop)) {
     const margins = { phaseDeg, gainUp: null, gainDown: null };
-    return { margins, largestDelay: delay, largestGain: stableRatio(loop, ratios), crossings };
+    return { margins, largestDelay: delay, largestGain: stableRatio(loop, ratios), crossings, criticalRatios: ratios };
   }
   const gainUp = leastOf(ratios.filter((ratio) => ratio > 1));
   const gainDown = largestOf(ratios.filter((ratio) => ratio < 1));
-  return { margins: { phaseDeg, gainUp, gainDown }, largestDelay: delay, largestGain: gainUp, crossings };
+  return {
+    margins: { phaseDeg, gainUp, gainDown },
+    largestDelay: delay,
+    largestGain: gainUp,
+    crossings,
+    criticalRatios: ratios,
+  };
 }
 
 /** Least phase margin over the crossings with some updates of delay more (or fewer), degrees. */

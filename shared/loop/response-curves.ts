@@ -1,12 +1,10 @@
-import type { MarginAgainstDelay, PhaseStep, Response } from '../model/design';
+import type { MarginAgainstDelay, Response } from '../model/design';
 import { largestBetween, bisect } from '../math/root-search';
 import { circlePoints, closedLoopPower, logarithmicPoints, responsePowers } from './frequency-response';
 import type { LinearLoop } from './linear-loop';
 import { phaseMarginDeg } from './margins';
 import type { GainCrossing } from './margins';
-import type { StepResponse } from './step-response';
 
-const stepPoints = 220;
 const responsePoints = 140;
 /** The longest delay that a plan can ask for, updates. */
 const longestDelay = 64;
@@ -65,14 +63,6 @@ function halfPowerFrequency(loop: LinearLoop, omega: Float64Array, h: Float64Arr
   if (below < 1) return null;
   const from = omega[below - 1] as number;
   return bisect((value) => closedLoopPower(loop, value) - 0.5, from, omega[below] as number) / (2 * Math.PI);
-}
-
-/** The phase step over the whole simulated time, eight time constants of the slowest pole: it ends within a few parts in a thousand of 1. */
-export function stepCurve({ phase }: Pick<StepResponse, 'phase'>): PhaseStep {
-  const last = phase.length - 1;
-  const count = Math.min(stepPoints, last + 1);
-  const updates = Array.from({ length: count }, (_, i) => Math.round((i * last) / (count - 1)));
-  return { updates, phase: updates.map((k) => phase[k] as number) };
 }
 
 /** Phase margin of these gains over every extra delay that a plan can ask for; null where the loop is unstable. */

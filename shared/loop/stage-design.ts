@@ -1,13 +1,17 @@
 import type { Achieved, Gains, StageDesign, StageWords } from '../model/design';
+import { amplitudeEnds } from './amplitude-ends';
+import type { AmplitudeError } from './amplitude-ends';
 import { analogPoles } from './analog-poles';
+import { bandwidthAgainstDelay } from './bandwidth-against-delay';
 import { dominantDamping } from './dominant-pair';
 import type { LinearLoop } from './linear-loop';
 import { gainCrossings, phaseMarginDeg, stabilityLimits } from './margins';
 import { noiseBandwidth } from './noise-bandwidth';
 import { closedLoopPoles } from './poles';
-import { closedLoopShape, emptyResponse, marginCurve, stepCurve } from './response-curves';
+import { closedLoopShape, emptyResponse, marginCurve } from './response-curves';
+import { rootLocus } from './root-locus';
 import type { StageLoop, WantedLoop } from './stage-loop';
-import { stepResponse } from './step-response';
+import { transientOf } from './transient';
 
 export interface StageInput {
   wanted: WantedLoop;
@@ -19,6 +23,7 @@ export interface StageInput {
   /** Kd·K0: loop-normalised gain per output LSB and detector unit. */
   perUnit: number;
   updateRateHz: number;
+  amplitude: AmplitudeError;
 }
 
 /** What one stage does: gains, poles, margins and responses, unquantised and from its words. */
@@ -27,6 +32,7 @@ export function stageDesign(input: StageInput): StageDesign {
   const { loop } = solved;
   const achieved = achievedValues(input);
   const limits = stabilityLimits(loop);
+  const poles = closedLoopPoles(loop);
   return {
     name: wanted.stage.name,
     gains: stageGains(input),
@@ -39,29 +45,22 @@ export function stageDesign(input: StageInput): StageDesign {
       order: loop.order,
       damping: solved.damping ?? 1,
       omega: 2 * solved.theta * input.updateRateHz,
+      form: wanted.loop.thirdOrder,
     }),
     largestDelay: limits.largestDelay,
     largestGain: limits.largestGain,
     words,
-    ...responses(loop, input.updateRateHz),
+    poles,
+    ...responses(loop, poles, input.updateRateHz),
     marginAgainstDelay: marginCurve(loop, limits.crossings),
-    frequencyStep: null,
-    frequencyRamp: null,
-    rootLocus: { ratio: [], poles: [], critical: [] },
-    bandwidthAgainstDelay: { delay: [], noiseBandwidth: [] },
-    amplitude: { low: unknownEnd, high: unknownEnd },
+    rootLocus: rootLocus(loop, poles, limits.criticalRatios),
+    bandwidthAgainstDelay: bandwidthAgainstDelay(loop, limits.largestDelay, wanted.loop.updateInterval),
+    amplitude: amplitudeEnds(loop, input.amplitude, {
+      updateInterval: wanted.loop.updateInterval,
+      frequencyHz: (theta) => frequencyHz(wanted, theta),
+    }),
   };
 }
-
-const unknownEnd = {
-  amplitudeDb: 0,
-  gainDb: 0,
-  stable: false,
-  noiseBandwidth: null,
-  damping: null,
-  naturalFrequencyHz: null,
-  phaseDeg: null,
-};
 
 function stageGains({ wanted, solved, perUnit }: StageInput): Gains {
   const { g1, g2, g3 } = solved.loop.gains;
@@ -76,10 +75,6 @@ function achievedValues({ wanted, solved, effective }: StageInput) {
   const exact = bandwidth(solved.loop);
   const noise = { wanted: stage.noiseBandwidth ?? null, exact, effective: bandwidth(effective) };
   const [pair, effectivePair] = [solved.loop, effective].map(dominantDamping);
-  const frequencyHz = (theta: number | undefined): number | null =>
-    theta === undefined
-      ? null
-      : ((loop.prewarp ? Math.atan(theta) : theta) * symbolRateBd) / (Math.PI * loop.updateInterval);
   return {
     stable: exact !== null,
     noiseBandwidth: noise,
@@ -87,39 +82,44 @@ function achievedValues({ wanted, solved, effective }: StageInput) {
     damping: { wanted: solved.damping, exact: pair?.damping ?? null, effective: effectivePair?.damping ?? null },
     naturalFrequencyHz: {
       wanted: stage.naturalFrequencyHz ?? null,
-      exact: frequencyHz(pair?.theta),
-      effective: frequencyHz(effectivePair?.theta),
+      exact: pair ? frequencyHz(wanted, pair.theta) : null,
+      effective: effectivePair ? frequencyHz(wanted, effectivePair.theta) : null,
     },
   };
 }
 
-function responses(loop: LinearLoop, updateRateHz: number) {
-  const poles = closedLoopPoles(loop);
+/** Natural frequency of an analog pair with this θ, un-warped where the plan pre-warps, Hz. */
+const frequencyHz = ({ loop, symbolRateBd }: WantedLoop, theta: number): number =>
+  ((loop.prewarp ? Math.atan(theta) : theta) * symbolRateBd) / (Math.PI * loop.updateInterval);
+
+function responses(loop: LinearLoop, poles: [number, number][], updateRateHz: number) {
   const slowest = poles.length ? Math.hypot(...(poles[0] as [number, number])) : 1;
-  if (!(slowest < 1) || noiseBandwidth(loop) === null) return { poles, ...noResponses(loop, updateRateHz) };
+  if (!(slowest < 1) || noiseBandwidth(loop) === null) return noResponses(loop, updateRateHz);
   const shape = closedLoopShape(loop, updateRateHz);
-  const step = stepResponse(loop, slowest);
   return {
-    poles,
     peakingDb: shape.peakingDb,
     bandwidth3Db: shape.bandwidth3Db,
     bandwidth3DbHz: shape.bandwidth3Db && shape.bandwidth3Db * updateRateHz,
-    settlingUpdates: step && step.settlingUpdates,
-    overshoot: step && step.overshoot,
-    phaseStep: step ? stepCurve(step) : { updates: [], phase: [] },
     response: shape.response,
+    ...(transientOf(loop, poles) ?? noTransient),
   };
 }
+
+const noTransient = {
+  settlingUpdates: null,
+  overshoot: null,
+  phaseStep: { updates: [], phase: [] },
+  frequencyStep: null,
+  frequencyRamp: null,
+};
 
 /** An unstable loop has no closed-loop response. */
 const noResponses = (loop: LinearLoop, updateRateHz: number) => ({
   peakingDb: null,
   bandwidth3Db: null,
   bandwidth3DbHz: null,
-  settlingUpdates: null,
-  overshoot: null,
-  phaseStep: { updates: [], phase: [] },
   response: emptyResponse(loop, updateRateHz),
+  ...noTransient,
 });
 
 const mapAchieved = ({ wanted, exact, effective }: Achieved, map: (value: number) => number): Achieved => ({

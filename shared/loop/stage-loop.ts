@@ -5,6 +5,7 @@ import type { LoopShape } from './exact-gains';
 import { bandwidthOverOmega, nominalGains, thetaOf } from './gains';
 import { linearLoop } from './linear-loop';
 import type { LinearLoop } from './linear-loop';
+import { requireStableForm } from './third-order-form';
 import { significantDown } from '../math/significant';
 
 /** Bandwidths that are worked out, cycles per update. */
@@ -16,7 +17,10 @@ export interface WantedLoop {
   /** JSON pointer of the stage. */
   pointer: string;
   stage: CompleteStage;
-  loop: Pick<CompleteCarrier | CompleteClock, 'order' | 'delay' | 'updateInterval' | 'method' | 'prewarp'>;
+  loop: Pick<
+    CompleteCarrier | CompleteClock,
+    'order' | 'thirdOrder' | 'delay' | 'updateInterval' | 'method' | 'prewarp'
+  >;
   symbolRateBd: number;
 }
 
@@ -43,17 +47,27 @@ export function stageLoop(wanted: WantedLoop): StageLoop {
   if (loop.order !== 2 && stage.damping !== undefined) {
     throw new ParameterError(`${pointer}/damping`, `a loop of order ${loop.order} takes no damping factor`);
   }
+  if (loop.order === 3) requireStableForm(loop.thirdOrder, formPointer(pointer));
   const damping = stage.damping ?? Math.SQRT1_2;
-  const shape = { order: loop.order, damping, delay: loop.delay, averaged: averagedSymbols(loop.updateInterval) };
+  const shape: LoopShape = {
+    order: loop.order,
+    damping,
+    delay: loop.delay,
+    averaged: averagedSymbols(loop.updateInterval),
+    form: loop.thirdOrder,
+  };
   const solved = loop.method === 'exact' ? exactStage(wanted, shape) : nominalStage(wanted, shape);
   return { ...solved, damping: loop.order === 2 ? damping : null };
 }
+
+/** The form belongs to the loop that the stage stands in. */
+const formPointer = (stagePointer: string): string => stagePointer.replace(/\/stages\/\d+$/, '/thirdOrder');
 
 type Solved = Pick<StageLoop, 'loop' | 'theta'>;
 
 function nominalStage(wanted: WantedLoop, shape: LoopShape): Solved {
   const theta = thetaAt(wanted, wantedOmegaTu(wanted, shape));
-  const gains = nominalGains(shape.order, { damping: shape.damping, theta });
+  const gains = nominalGains(shape.order, { damping: shape.damping, theta, form: shape.form });
   return { loop: linearLoop({ gains, delay: shape.delay, averaged: shape.averaged }), theta };
 }
 
@@ -88,7 +102,7 @@ function exactFrequency(wanted: WantedLoop, shape: LoopShape, omegaTu: number): 
 
 /** Free frequency of the analog loop times Tu: K, ωn or ω0. */
 function wantedOmegaTu({ pointer, stage, loop, symbolRateBd }: WantedLoop, shape: LoopShape): number {
-  const perOmega = bandwidthOverOmega(shape.order, shape.damping);
+  const perOmega = bandwidthOverOmega(shape.order, shape.damping, shape.form);
   const [key, omegaTu] =
     stage.noiseBandwidth !== undefined
       ? ['noiseBandwidth', (stage.noiseBandwidth * loop.updateInterval) / perOmega]
@@ -115,6 +129,7 @@ function rangeSentence(key: string, scale: { perOmega: number; symbolRateBd: num
     : `the natural frequency with this update interval must lie between ${roundedDown(low)} and ${roundedDown(high)} Hz`;
 }
 
+/** @throws {ParameterError} where the bilinear image ends */
 function thetaAt({ pointer, stage, loop }: WantedLoop, omegaTu: number): number {
   if (!loop.prewarp || omegaTu < Math.PI) return thetaOf(omegaTu, loop.prewarp);
   const key = stage.noiseBandwidth !== undefined ? 'noiseBandwidth' : 'naturalFrequencyHz';

@@ -18,8 +18,12 @@ export interface CompleteStage {
   until?: { symbols?: number; lockMetric?: number };
 }
 
-type CompleteLoop<T extends CarrierLoop | ClockLoop> = Omit<Filled<T>, 'stages' | 'arithmetic' | 'lockDetector'> & {
+type CompleteLoop<T extends CarrierLoop | ClockLoop> = Omit<
+  Filled<T>,
+  'stages' | 'thirdOrder' | 'arithmetic' | 'lockDetector'
+> & {
   stages: CompleteStage[];
+  thirdOrder: Filled<NonNullable<T['thirdOrder']>>;
   arithmetic: Omit<Filled<NonNullable<T['arithmetic']>>, 'overflow'> & {
     overflow: Record<(typeof nodes)[number], Overflow>;
   };

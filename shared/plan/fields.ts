@@ -58,6 +58,8 @@ const loopFields = (fold: 2 | 3, key: 'carrier' | 'clock'): PlanField[] => {
     at(30, 'stages/*/naturalFrequencyHz', 'Natural frequency', 'Hz'),
     at(31, 'stages/*/name', 'Stage'),
     at(32, 'stages', 'Stages'),
+    at(33, 'thirdOrder/a3', 'Form a3'),
+    at(34, 'thirdOrder/b3', 'Form b3'),
   ];
 };
 

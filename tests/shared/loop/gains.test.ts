@@ -42,7 +42,6 @@ describe('firstOrderGains', () => {
 });
 
 describe('thirdOrderGains', () => {
-  // Design.md's map by hand: the denominator over w is Π of (1 + aθ)-type factors; at θ = 0.1 and a3 = 1.1, b3 = 2.4
   // By hand: (1 + b3θ + a3θ² + θ³)·w³ + (2b3θ + 4a3θ² + 6θ³)·w² + (4a3θ² + 12θ³)·w + 8θ³ at θ = 0.1 is
   // 1.252·w³ + 0.53·w² + 0.056·w + 0.008.
   it('expands to the bilinear image of the analog form', () => {

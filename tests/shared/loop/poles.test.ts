@@ -20,6 +20,17 @@ const residual = ({ gains: { g1, g2 }, delay }: ReturnType<typeof loopOf>, [re, 
 };
 
 describe('closedLoopPoles', () => {
+  // By hand: ζ = 1 without delay is the double pole (1 − θ)/(1 + θ), twice and no more.
+  it.each([0.008, 0.001, 0.05])('finds a double pole twice at θ = %f', (theta) => {
+    const loop = linearLoop({ gains: secondOrderGains({ damping: 1, theta }), delay: 0, averaged: 1 });
+    const poles = closedLoopPoles(loop);
+    expect(poles).toHaveLength(2);
+    for (const [re, im] of poles) {
+      expect(re).toBeCloseTo((1 - theta) / (1 + theta), 8);
+      expect(im).toBe(0);
+    }
+  });
+
   it('matches mathjs on the cubic of D = 1', () => {
     const loop = loopOf(0.05, 1);
     const { g1, g2 } = loop.gains;

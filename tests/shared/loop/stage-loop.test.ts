@@ -4,7 +4,14 @@ import { dominantDamping } from '../../../shared/loop/dominant-pair';
 import { stageLoop } from '../../../shared/loop/stage-loop';
 import type { WantedLoop } from '../../../shared/loop/stage-loop';
 
-const loop = { order: 2, delay: 0, updateInterval: 1, method: 'nominal', prewarp: false } as const;
+const loop = {
+  order: 2,
+  delay: 0,
+  updateInterval: 1,
+  method: 'nominal',
+  prewarp: false,
+  thirdOrder: { a3: 1.1, b3: 2.4 },
+} as const;
 const wanted = (stage: object, changes: object = {}): WantedLoop => ({
   pointer: '/carrier/stages/1',
   stage: { name: 'track', ...stage },

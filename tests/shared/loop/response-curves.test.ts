@@ -1,10 +1,8 @@
 import { describe, expect, it } from 'vitest';
 import { secondOrderGains } from '../../../shared/loop/gains';
 import { linearLoop } from '../../../shared/loop/linear-loop';
-import { closedLoopPoles } from '../../../shared/loop/poles';
-import { closedLoopShape, emptyResponse, marginCurve, stepCurve } from '../../../shared/loop/response-curves';
+import { closedLoopShape, emptyResponse, marginCurve } from '../../../shared/loop/response-curves';
 import { gainCrossings } from '../../../shared/loop/margins';
-import { stepResponse } from '../../../shared/loop/step-response';
 import { impulseResponse } from './brute-force';
 
 const nominal = (bandwidth: number, delay: number, averaged = 1) =>
@@ -13,47 +11,6 @@ const nominal = (bandwidth: number, delay: number, averaged = 1) =>
     delay,
     averaged,
   });
-
-const stepOf = (loop: ReturnType<typeof nominal>) => stepResponse(loop, Math.hypot(...closedLoopPoles(loop)[0]!));
-
-describe('stepResponse', () => {
-  // Independent: a step is the running sum of the impulse response.
-  it.each([
-    [0.01, 3, 1],
-    [0.004, 3, 1],
-    [0.02, 10, 8],
-  ])(
-    'settles and overshoots like the summed impulse response at BnT = %f, D = %i, U = %i',
-    (bandwidth, delay, averaged) => {
-      const loop = nominal(bandwidth, delay, averaged);
-      let sum = 0;
-      const expected = impulseResponse(loop, 3000).map((value) => (sum += value));
-      const step = stepOf(loop)!;
-      const last = expected.findLastIndex((value) => Math.abs(value - 1) > 0.02);
-      expect(step.settlingUpdates).toBe(last + 1);
-      expect(step.overshoot).toBeCloseTo(Math.max(...expected) - 1, 12);
-      expect(step.phase[200]).toBeCloseTo(expected[200]!, 12);
-    },
-  );
-
-  // Analog type-2 loop, ζ = 1/√2: y = 1 − e^(−x)(cos x − sin x) at x = ωn·t/√2 peaks at x = π/2 with e^(−π/2).
-  it('overshoots by e^(−π/2) when it is slow', () => {
-    expect(stepOf(nominal(1e-4, 0))!.overshoot).toBeCloseTo(Math.exp(-Math.PI / 2), 3);
-  });
-
-  it('is not simulated when it would take more than a million updates', () => {
-    expect(stepOf(nominal(1e-6, 0))).toBeNull();
-  });
-
-  it('is drawn from 0 to beyond its settling', () => {
-    const step = stepOf(nominal(0.01, 3))!;
-    const { updates, phase } = stepCurve(step);
-    expect(updates[0]).toBe(0);
-    expect(updates.at(-1)).toBeGreaterThan(step.settlingUpdates);
-    expect(new Set(updates).size).toBe(updates.length);
-    expect(phase.at(-1)).toBeCloseTo(1, 1);
-  });
-});
 
 describe('closedLoopShape', () => {
   // Independent: Fourier sum of the impulse response.

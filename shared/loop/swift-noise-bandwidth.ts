@@ -1,0 +1,77 @@
+import { forwardPolynomial, delayExponent } from './linear-loop';
+import type { LinearLoop } from './linear-loop';
+import { noiseBandwidth } from './noise-bandwidth';
+
+/** Share of the result that doubles may lose; beyond it the recursion in double-double is taken. */
+const mostLost = 1e-5;
+
+/**
+ * The noise bandwidth of `noiseBandwidth` in doubles, some ten times faster: for curves, and for searches whose
+ * end is worked out again. It loses some 1e−15/(ωnTu)^n of the result, for usual loops 1e−9. A loop so slow that doubles would lose more takes the exact way.
+ *
+ * @returns Bn·Tu, cycles per update; null for an unstable loop, or one without gain
+ */
+export function swiftNoiseBandwidth(loop: LinearLoop): number | null {
+  if (loop.order === 0) return null;
+  const { g1, g2, g3 } = loop.gains;
+  const slowness = loop.order === 3 ? g3 : loop.order === 2 ? g2 : g1;
+  if (!(1e-15 / slowness < mostLost)) return noiseBandwidth(loop);
+  return halfEnergy(loop);
+}
+
+/** ½ Σ h², by the recursion that takes the closed-loop polynomial down degree by degree (see `noiseBandwidth`). */
+function halfEnergy(loop: LinearLoop): number | null {
+  const { a, b } = polynomials(loop);
+  const lead = a[0] as number;
+  let sum = 0;
+  for (let k = a.length - 1; k > 0; k -= 1) {
+    const top = a[0] as number;
+    if (!(top > 0)) return null;
+    const [alpha, beta] = [(a[k] as number) / top, (b[k] as number) / top];
+    sum += (b[k] as number) * beta;
+    reduce(a, b, alpha, beta, k);
+  }
+  const last = a[0] as number;
+  if (!(last > 0)) return null;
+  const energy = (sum + (b[0] as number) ** 2 / last) / lead;
+  return Number.isFinite(energy) && energy > 0 ? energy / 2 : null;
+}
+
+/** a_i ← a_i − α·a_(k−i) and b_i ← b_i − β·a_(k−i), with the a of before, from both ends at once. */
+function reduce(a: Float64Array, b: Float64Array, alpha: number, beta: number, k: number): void {
+  for (let i = 0, j = k; i <= j; i += 1, j -= 1) {
+    const [low, high] = [a[i] as number, a[j] as number];
+    a[i] = low - alpha * high;
+    b[i] = (b[i] as number) - beta * high;
+    if (i === j) continue;
+    a[j] = high - alpha * low;
+    b[j] = (b[j] as number) - beta * low;
+  }
+}
+
+/** Denominator z^E·(z − 1)^n + M and numerator M in z, highest power first, of one length. */
+function polynomials(loop: LinearLoop): { a: Float64Array; b: Float64Array } {
+  const exponent = delayExponent(loop);
+  const length = exponent + loop.order + 1;
+  const [a, b] = [new Float64Array(length), new Float64Array(length)];
+  const integrators = [[1], [1, -1], [1, -2, 1], [1, -3, 3, -1]][loop.order] as number[];
+  integrators.forEach((value, i) => (a[i] = value));
+  const forward = inPowersOfZ(forwardPolynomial(loop));
+  forward.forEach((value, i) => {
+    const place = length - forward.length + i;
+    b[place] = value;
+    a[place] = (a[place] as number) + value;
+  });
+  return { a, b };
+}
+
+/** A polynomial in w = z − 1, constant first, in powers of z, highest first: Horner's rule in z − 1. */
+function inPowersOfZ(coefficients: readonly number[]): number[] {
+  let powers: number[] = [];
+  for (const coefficient of [...coefficients].reverse()) {
+    const next = [...powers, 0].map((value, i) => value - (powers[i - 1] ?? 0));
+    next[next.length - 1] = (next[next.length - 1] as number) + coefficient;
+    powers = next;
+  }
+  return powers;
+}
