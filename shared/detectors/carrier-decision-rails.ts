@@ -5,7 +5,7 @@ import { normalDensity } from '../math/gaussian-tail';
 export interface RailDecision {
   /** Levels of one rail: 4 for 16QAM, 8 for 64QAM. */
   side: number;
-  /** Noise deviation of one rail. */
+  /** Noise deviation of one rail, 0 or more. */
   deviation: number;
   /** The thresholds stand this much farther out than half-way between the levels of the signal. */
   stretch: number;
@@ -25,8 +25,9 @@ function slicedMean({ side, deviation, stretch }: RailDecision, x: number): numb
   const half = halfStep(side);
   let sum = 0;
   for (let k = 1; k < side; k += 1) {
-    const t = (x - stretch * (2 * k - side) * half) / deviation;
-    sum += t > certain ? 1 : t < -certain ? -1 : erf(t * Math.SQRT1_2);
+    const beyond = x - stretch * (2 * k - side) * half;
+    const far = certain * deviation;
+    sum += Math.abs(beyond) >= far ? Math.sign(beyond) : erf((beyond / deviation) * Math.SQRT1_2);
   }
   return half * sum;
 }

@@ -1,11 +1,11 @@
-import { sineSeries } from '../math/sine-series';
 import { ParameterError } from '../parameter-error';
 import { railCurve, railSlope, railVariance } from './carrier-decision-rails';
-import { regionCurve, regionSlope, regionVariance } from './carrier-decision-regions';
-import { decisionRegions, nearestIndex, stretchedRegions } from './decision-regions';
+import { noiselessCurve, regionCurve, regionSlope, regionVariance } from './carrier-decision-regions';
+import { decisionRegions, stretchedRegions } from './decision-regions';
 import type { DetectorModel } from './detector';
 import { distinctPoints, largestMagnitude, pointsOf, rotationalSymmetry } from './modulations';
 import type { Modulation } from './modulations';
+import { shortened } from './short-curve';
 import { scaledModel } from './carrier-signal';
 import type { CarrierSignal } from './carrier-signal';
 import { signBpsk, signQpsk } from './carrier-sign';
@@ -13,6 +13,7 @@ import { signBpsk, signQpsk } from './carrier-sign';
 /** Im(z · conj â) at unit amplitude. */
 interface Decision {
   curve: (x: number) => number;
+  noiseless: (x: number) => number;
   variance: number;
   /** Slope at lock when the thresholds stand `stretch` times farther out than half-way between the points. */
   slope: (stretch: number) => number;
@@ -20,8 +21,6 @@ interface Decision {
 
 /** Slope that is too little to lock on, over that without noise; the sums here carry some 1e-10. */
 const leastSlope = 1e-6;
-/** Harmonics beyond which a series takes longer than the curve itself, whose borders are then mostly out of reach. */
-const mostHarmonics = 64;
 /** Error of the gain control over which the change of the slope is taken, either way, dB. */
 const amplitudeStepDb = 0.5;
 
@@ -42,7 +41,7 @@ export function decision(signal: CarrierSignal): DetectorModel {
  * @throws {ParameterError} pointing at Es/N0 where so many decisions are wrong that no slope is left
  */
 function unitDecision({ modulation, esN0, ringRatios }: CarrierSignal): DetectorModel {
-  const { curve, variance, slope } = decisionOf(modulation, Math.sqrt(1 / (2 * esN0)), ringRatios);
+  const { curve, noiseless, variance, slope } = decisionOf(modulation, Math.sqrt(1 / (2 * esN0)), ringRatios);
   const gain = slope(1);
   if (!(gain > leastSlope)) {
     throw new ParameterError(
@@ -58,8 +57,8 @@ function unitDecision({ modulation, esN0, ringRatios }: CarrierSignal): Detector
     covariance: [variance],
     selfCovariance: [],
     amplitudeExponent: exponentOf(slope, gain),
-    noisy: shortened(curve, period, harmonics(modulation, esN0, ringRatios)),
-    noiseless: noiselessCurve(modulation, ringRatios),
+    noisy: shortened(curve, { period, esN0, largest: largestMagnitude(modulation, ringRatios) }),
+    noiseless,
   };
 }
 
@@ -68,6 +67,7 @@ function decisionOf(modulation: Modulation, deviation: number, ringRatios: Carri
     const rail = { side: modulation === '16QAM' ? 4 : 8, deviation, stretch: 1 };
     return {
       curve: (x) => railCurve(rail, x),
+      noiseless: (x) => railCurve({ ...rail, deviation: 0 }, x),
       variance: railVariance(rail),
       slope: (stretch) => railSlope({ ...rail, stretch }),
     };
@@ -77,6 +77,7 @@ function decisionOf(modulation: Modulation, deviation: number, ringRatios: Carri
   const parts = { regions, decided, sent: distinctPoints(modulation, ringRatios), deviation };
   return {
     curve: (x) => regionCurve(parts, x),
+    noiseless: (x) => noiselessCurve(parts, x),
     variance: regionVariance(parts),
     slope: (stretch) => regionSlope({ ...parts, regions: stretchedRegions(regions, stretch) }),
   };
@@ -86,25 +87,4 @@ function decisionOf(modulation: Modulation, deviation: number, ringRatios: Carri
 function exponentOf(slope: (stretch: number) => number, gain: number): number {
   const step = 10 ** (amplitudeStepDb / 20);
   return (step * slope(1 / step) - slope(step) / step) / (gain * 2 * Math.log(step));
-}
-
-/** Harmonics that the noise leaves above 1e-11: each point's phase is smeared by 1/(|a|√(2γ)) rad. */
-const harmonics = (modulation: Modulation, esN0: number, ringRatios: CarrierSignal['ringRatios']): number =>
-  4 + Math.ceil((10.5 * largestMagnitude(modulation, ringRatios) * Math.sqrt(esN0)) / rotationalSymmetry[modulation]);
-
-const shortened = (curve: (x: number) => number, period: number, count: number) =>
-  count > mostHarmonics ? curve : sineSeries(curve, period, count + 1);
-
-function noiselessCurve(modulation: Modulation, ringRatios: CarrierSignal['ringRatios']): (x: number) => number {
-  const points = pointsOf(modulation, ringRatios);
-  const sent = distinctPoints(modulation, ringRatios);
-  return (x) => {
-    const [cos, sin] = [Math.cos(x), Math.sin(x)];
-    const errors = sent.map(([aI, aQ]) => {
-      const [i, q] = [aI * cos - aQ * sin, aI * sin + aQ * cos];
-      const [dI, dQ] = points[nearestIndex(points, i, q)]!;
-      return q * dI - i * dQ;
-    });
-    return errors.reduce((sum, error) => sum + error, 0) / sent.length;
-  };
 }

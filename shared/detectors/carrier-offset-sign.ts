@@ -1,6 +1,7 @@
 import erf from '@stdlib/math-base-special-erf';
 import { normalDensity } from '../math/gaussian-tail';
 import type { DetectorModel } from './detector';
+import { shortened } from './short-curve';
 import { interference, tapAt, tapPower } from './offset-interference';
 import type { Interference } from './offset-interference';
 import type { CarrierSignal } from './carrier-signal';
@@ -21,6 +22,7 @@ const mostLags = 64;
  */
 export function signOqpsk({ amplitude, esN0, rollOff }: CarrierSignal): DetectorModel {
   const between = interference(rollOff);
+  const largest = Math.hypot(Math.SQRT1_2, between.values.at(-1)! + 3 * Math.sqrt(between.rest));
   const deviation = Math.sqrt(1 / (2 * esN0));
   const density = normalDensity(Math.SQRT1_2 / deviation) / deviation;
   const power = tapPower(rollOff) / 2;
@@ -32,7 +34,7 @@ export function signOqpsk({ amplitude, esN0, rollOff }: CarrierSignal): Detector
     covariance: covarianceOf(amplitude ** 2, rollOff, magnitude ** 2, 1 / esN0),
     selfCovariance: covarianceOf(amplitude ** 2, rollOff, 0.5, 0),
     amplitudeExponent: 1,
-    noisy: (x) => amplitude * meanError(between, deviation, x),
+    noisy: shortened((x) => amplitude * meanError(between, deviation, x), { period: Math.PI, esN0, largest }),
     noiseless: (x) => amplitude * meanError(between, 0, x),
   };
 }

@@ -1,50 +1,34 @@
 import type { Point } from '../fixed-point/constellation';
 import { edgeTail, normalDensity, tail } from '../math/gaussian-tail';
 import { nearestIndex } from './decision-regions';
-import type { Border, DecisionRegions } from './decision-regions';
+import type { DecisionRegions } from './decision-regions';
 
 /** Borders farther than this many deviations from a sample decide nothing: 2e-11 of the samples reach so far. */
 const reach = 6.7;
 
-/** One border as a sample of a given mean sees it, lengths in deviations of the noise. */
-export interface SeenBorder {
-  border: Border;
-  /** Distance from the border's line, positive on the side of `near`. */
-  distance: number;
-  /** The border's ends along its line, from the foot of the perpendicular. */
-  first: number;
-  last: number;
-  /** Change of P(near) by this border alone: minus what it lets over from its near side, or what it lets in. */
-  share: number;
-}
+/**
+ * What is told of a border by its index, lengths in deviations of the noise: its distance, positive on the side of
+ * `near`; its two ends along its line from the foot of the perpendicular; and the share of P(near) that comes over it.
+ */
+export type TakeBorder = (border: number, distance: number, first: number, last: number, share: number) => void;
 
 /** Calls back for every border near enough to matter; returns the index of the region in which the mean lies. */
-export function eachBorder(
-  { points, borders }: DecisionRegions,
-  deviation: number,
-  [i, q]: Point,
-  take: (seen: SeenBorder) => void,
-): number {
+export function eachBorder(regions: DecisionRegions, deviation: number, [i, q]: Point, take: TakeBorder): number {
+  const { points, near, far, normalI, normalQ, offset, from, to } = regions;
   const home = nearestIndex(points, i, q);
-  for (let k = 0; k < borders.length; k += 1) {
-    const border = borders[k]!;
-    const { normal, offset, from, to } = border;
-    const distance = (normal[0] * i + normal[1] * q - offset) / deviation;
+  const scale = 1 / deviation;
+  for (let k = 0; k < offset.length; k += 1) {
+    const distance = (normalI[k]! * i + normalQ[k]! * q - offset[k]!) * scale;
     if (distance > reach || distance < -reach) continue;
-    const along = normal[0] * q - normal[1] * i;
-    const [first, last] = [(from - along) / deviation, (to - along) / deviation];
+    const along = normalI[k]! * q - normalQ[k]! * i;
+    const first = (from[k]! - along) * scale;
+    const last = (to[k]! - along) * scale;
     if (first > reach || last < -reach) continue;
-    const share = -sideOf(border, home, distance) * hidden(Math.abs(distance), first, last);
-    take({ border, distance, first, last, share });
+    // Rounding must not put a mean on one side of its own region's border and into the other region.
+    const side = home === near[k] ? 1 : home === far[k] ? -1 : Math.sign(distance);
+    take(k, distance, first, last, -side * hidden(Math.abs(distance), first, last));
   }
   return home;
-}
-
-/** +1 on the side of `near`. Rounding must not put a mean on one side here and into the other's region there. */
-function sideOf({ near, far }: Border, home: number, distance: number): number {
-  if (home === near) return 1;
-  if (home === far) return -1;
-  return Math.sign(distance);
 }
 
 /** Share of the noise beyond a border at a distance, between its two ends, all in deviations. */
@@ -54,9 +38,9 @@ export function hidden(distance: number, first: number, last: number): number {
   return edgeTail(distance, first / distance, last / distance);
 }
 
-/** Density of the noise on a border as a line integral, per unit of distance: what P(near) gains by a step along n. */
-export const borderDensity = ({ distance, first, last }: SeenBorder, deviation: number): number =>
-  (normalDensity(distance) * (tail(first) - tail(last))) / deviation;
+/** Density of the noise on a border as a line integral, per deviation: what P(near) gains by a step along n. */
+export const borderDensity = (distance: number, first: number, last: number): number =>
+  normalDensity(distance) * (tail(first) - tail(last));
 
 /**
  * Mean of the decided point over the noise for a sample of mean m: the nearest point, changed by what each border lets
@@ -70,10 +54,11 @@ export const borderDensity = ({ distance, first, last }: SeenBorder, deviation: 
  * @param decided what is decided for each point
  */
 export function decidedMean(regions: DecisionRegions, deviation: number, decided: readonly Point[], m: Point): Point {
+  const { near, far } = regions;
   let [meanI, meanQ] = [0, 0];
-  const home = eachBorder(regions, deviation, m, ({ border: { near, far }, share }) => {
-    meanI += share * (decided[near]![0] - decided[far]![0]);
-    meanQ += share * (decided[near]![1] - decided[far]![1]);
+  const home = eachBorder(regions, deviation, m, (k, _distance, _first, _last, share) => {
+    meanI += share * (decided[near[k]!]![0] - decided[far[k]!]![0]);
+    meanQ += share * (decided[near[k]!]![1] - decided[far[k]!]![1]);
   });
   return [decided[home]![0] + meanI, decided[home]![1] + meanQ];
 }

@@ -1,16 +1,22 @@
 import type { Point } from '../fixed-point/constellation';
 
 /**
- * The borders between the regions in which each point of a list is the nearest. A border is a stretch of the line
- * n·z = offset, from `from` to `to` along the line's direction (−nQ, nI); either may be infinite.
+ * The borders between the regions in which each point of a list is the nearest, as columns: one entry a border. It is
+ * the stretch of the line n·z = offset from `from` to `to` along the line's direction (−nQ, nI); either may be infinite.
  */
 export interface DecisionRegions {
   points: readonly Point[];
-  borders: readonly Border[];
+  /** Indices of the points on either side; n goes from `far` to `near`. */
+  near: Int32Array;
+  far: Int32Array;
+  normalI: Float64Array;
+  normalQ: Float64Array;
+  offset: Float64Array;
+  from: Float64Array;
+  to: Float64Array;
 }
 
-export interface Border {
-  /** Indices of the points on either side; n goes from `far` to `near`. */
+interface Border {
   near: number;
   far: number;
   normal: Point;
@@ -23,14 +29,21 @@ export interface Border {
 const shortest = 1e-9;
 
 export function decisionRegions(points: readonly Point[]): DecisionRegions {
-  const borders: Border[] = [];
-  for (let near = 0; near < points.length; near += 1) {
-    for (let far = near + 1; far < points.length; far += 1) {
-      const border = borderBetween(points, near, far);
-      if (border.to - border.from > shortest) borders.push(border);
-    }
-  }
-  return { points, borders };
+  const pairs = points.flatMap((_, near) => points.slice(near + 1).map((_each, k) => [near, near + 1 + k] as const));
+  const borders = pairs
+    .map(([near, far]) => borderBetween(points, near, far))
+    .filter(({ from, to }) => to - from > shortest);
+  const column = (value: (border: Border) => number) => Float64Array.from(borders, value);
+  return {
+    points,
+    near: Int32Array.from(borders, ({ near }) => near),
+    far: Int32Array.from(borders, ({ far }) => far),
+    normalI: column(({ normal }) => normal[0]),
+    normalQ: column(({ normal }) => normal[1]),
+    offset: column(({ offset }) => offset),
+    from: column(({ from }) => from),
+    to: column(({ to }) => to),
+  };
 }
 
 /** The perpendicular bisector of two points, cut to where no third point is nearer. */
@@ -43,37 +56,41 @@ function borderBetween(points: readonly Point[], near: number, far: number): Bor
   let [from, to] = [-Infinity, Infinity];
   points.forEach(([i, q], other) => {
     if (other === near || other === far) return;
-    // |z − p|² < |z − other|² along z = offset·n + t·(−nQ, nI) is a·t < b.
-    const a = 2 * (-(i - nearI) * normal[1] + (q - nearQ) * normal[0]);
-    const b =
-      i ** 2 + q ** 2 - nearI ** 2 - nearQ ** 2 - 2 * offset * ((i - nearI) * normal[0] + (q - nearQ) * normal[1]);
-    if (Math.abs(a) < 1e-12) {
-      if (b < -1e-12) to = -Infinity;
-    } else if (a > 0) to = Math.min(to, b / a);
-    else from = Math.max(from, b / a);
+    const [stepI, stepQ] = [i - nearI, q - nearQ];
+    // At offset·n + t·(−nQ, nI) the near point is nearer than the other one where steepness·t < level.
+    const steepness = 2 * (stepQ * normal[0] - stepI * normal[1]);
+    const level = i ** 2 + q ** 2 - nearI ** 2 - nearQ ** 2 - 2 * offset * (stepI * normal[0] + stepQ * normal[1]);
+    if (Math.abs(steepness) < 1e-12) {
+      if (level < -1e-12) to = -Infinity;
+    } else if (steepness > 0) to = Math.min(to, level / steepness);
+    else from = Math.max(from, level / steepness);
   });
   return { near, far, normal, offset, from, to };
 }
 
-/** The nearest point of a list, by index. */
+/** The nearest point of a list, by index; the first of equally near ones. */
 export function nearestIndex(points: readonly Point[], i: number, q: number): number {
   let least = Infinity;
   let index = 0;
   for (let k = 0; k < points.length; k += 1) {
-    const [pI, pQ] = points[k]!;
-    const distance = (i - pI) ** 2 + (q - pQ) ** 2;
-    if (distance < least) [least, index] = [distance, k];
+    const point = points[k]!;
+    const distance = (point[0] - i) * (point[0] - i) + (point[1] - q) * (point[1] - q);
+    if (distance < least) {
+      least = distance;
+      index = k;
+    }
   }
   return index;
 }
 
-/** The same regions seen from the origin `stretch` times as far away, points and all. */
-export const stretchedRegions = ({ points, borders }: DecisionRegions, stretch: number): DecisionRegions => ({
-  points: points.map(([i, q]): Point => [stretch * i, stretch * q]),
-  borders: borders.map((border) => ({
-    ...border,
-    offset: stretch * border.offset,
-    from: stretch * border.from,
-    to: stretch * border.to,
-  })),
-});
+/** The same regions from the origin `stretch` times as far away, points and all. */
+export function stretchedRegions(regions: DecisionRegions, stretch: number): DecisionRegions {
+  const stretched = (column: Float64Array) => column.map((value) => stretch * value);
+  return {
+    ...regions,
+    points: regions.points.map(([i, q]): Point => [stretch * i, stretch * q]),
+    offset: stretched(regions.offset),
+    from: stretched(regions.from),
+    to: stretched(regions.to),
+  };
+}

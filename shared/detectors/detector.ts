@@ -18,7 +18,7 @@ export interface DetectorModel {
   selfCovariance: readonly number[];
   /** The slope goes with the amplitude to this power. */
   amplitudeExponent: number;
-  /** Mean error at a static offset x (radians or symbols), with and without noise. */
+  /** Mean error at a static offset x (radians or symbols), with and without noise; both odd functions. */
   noisy: (x: number) => number;
   noiseless: (x: number) => number;
 }
@@ -89,12 +89,20 @@ export function sCurve(model: DetectorModel, scale: number) {
 
 const unitCurve = once(({ period, noiseless, noisy }) => {
   const x = Array.from({ length: curvePoints }, (_, i) => period * (i / (curvePoints - 1) - 0.5));
-  return { x, noiseless: x.map(noiseless), noisy: x.map(noisy) };
+  return { x, noiseless: oddValues(noiseless, x), noisy: oddValues(noisy, x) };
 });
+
+/** Values of an odd function at places that are each other's mirror images about 0, the latter half worked out. */
+function oddValues(curve: (x: number) => number, places: readonly number[]): number[] {
+  const right = places.slice(Math.ceil(places.length / 2)).map(curve);
+  const middle = places.length % 2 === 1 ? [0] : [];
+  return [...right.map((value) => -value).reverse(), ...middle, ...right];
+}
 
 /** Shape of the S-curve with noise, over its slope at lock. */
 export const sCurveShape = once(({ noisy, gain, period }: DetectorModel): SCurveShape => {
-  const s = Array.from({ length: shapePoints }, (_, i) => noisy(period * ((i + 0.5) / shapePoints - 0.5)) / gain);
+  const places = Array.from({ length: shapePoints }, (_, i) => period * ((i + 0.5) / shapePoints - 0.5));
+  const s = oddValues(noisy, places).map((value) => value / gain);
   const mean = (of: (value: number, i: number) => number) =>
     s.reduce((sum, value, i) => sum + of(value, i), 0) / shapePoints;
   const meanSquare = mean((value) => value ** 2);

@@ -9,42 +9,46 @@ export interface DetectorNull {
   lock: boolean;
 }
 
-const intervals = 180;
+/** Samples over half a period, half a step off its ends. */
+const samples = 90;
 /** Values this small against the largest are rounding. */
 const rounding = 1e-9;
-
-/** Zeros of an S-curve with noise over one period, rising. */
-export function nullsOf({ noisy, period }: Pick<DetectorModel, 'noisy' | 'period'>): DetectorNull[] {
-  // Half a step off the grid, so that lock and the middle between two locks lie inside an interval.
-  const at = (i: number): number => period * ((i + 0.5) / intervals - 0.5);
-  const values = Array.from({ length: intervals }, (_, i) => noisy(at(i)));
-  const largest = Math.max(...values.map(Math.abs));
-  const clear = values.flatMap((value, i) => (Math.abs(value) > rounding * largest ? [i] : []));
-  return clear.flatMap((i, k) => {
-    const next = clear[k + 1] ?? clear[0]! + intervals;
-    const [before, after] = [values[i]!, values[next % intervals]!];
-    if (before > 0 === after > 0) return [];
-    const root = zeroBetween(noisy, { x: at(i), value: before }, { x: at(next), value: after });
-    const x = root > (period / 2) * (1 + 1e-6) ? root - period : root;
-    const lock = Math.abs(x) < 1e-6 * period;
-    return [{ x: lock ? 0 : Math.min(x, period / 2), stable: after > 0, lock }];
-  });
-}
 
 interface Sample {
   x: number;
   value: number;
 }
 
-/** The middle of an interval first, where symmetry puts most zeros, then chords that halve an end that stays. */
+/**
+ * Zeros of an S-curve with noise over one period, rising. The curve is odd, so lock and the middle between two locks
+ * are zeros, and all others come in pairs.
+ */
+export function nullsOf({ noisy, period }: Pick<DetectorModel, 'noisy' | 'period'>): DetectorNull[] {
+  const places = Array.from({ length: samples }, (_, i) => (period * (i + 0.5)) / (2 * samples));
+  const curve = places.map((x): Sample => ({ x, value: noisy(x) }));
+  const largest = Math.max(...curve.map(({ value }) => Math.abs(value)));
+  const clear = curve.filter(({ value }) => Math.abs(value) > rounding * largest);
+  const right = clear.slice(1).flatMap((after, i): DetectorNull[] => {
+    const before = clear[i]!;
+    if (before.value > 0 === after.value > 0) return [];
+    return [{ x: zeroBetween(noisy, before, after), stable: after.value > 0, lock: false }];
+  });
+  const left = right.map((zero) => ({ ...zero, x: -zero.x })).reverse();
+  const atLock = { x: 0, stable: (clear[0]?.value ?? 0) > 0, lock: true };
+  const between = { x: period / 2, stable: (clear.at(-1)?.value ?? 0) < 0, lock: false };
+  return [...left, atLock, ...right, between];
+}
+
+/** By chords that halve the value at an end that stays (the Illinois rule). */
 function zeroBetween(curve: (x: number) => number, from: Sample, to: Sample): number {
   let [low, high] = [from, to];
-  const width = to.x - from.x;
   const close = 1e-9 * Math.max(Math.abs(from.value), Math.abs(to.value));
-  let x = (low.x + high.x) / 2;
-  for (let round = 0; round < 40; round += 1) {
+  const narrow = 1e-7 * (to.x - from.x);
+  let x = from.x;
+  for (let round = 0; round < 60 && high.x - low.x > narrow; round += 1) {
+    x = low.x - (low.value * (high.x - low.x)) / (high.value - low.value);
     const value = curve(x);
-    if (Math.abs(value) <= close || high.x - low.x < 1e-7 * width) break;
+    if (Math.abs(value) <= close) break;
     if (value > 0 === low.value > 0)
       [low, high] = [
         { x, value },
@@ -55,7 +59,6 @@ function zeroBetween(curve: (x: number) => number, from: Sample, to: Sample): nu
         { ...low, value: low.value / 2 },
         { x, value },
       ];
-    x = low.x - (low.value * (high.x - low.x)) / (high.value - low.value);
   }
   return x;
 }

@@ -23,18 +23,16 @@ const pairs = 4;
 /**
  * The rail half-way between its strobes: Σ ±g(k + ½)/√2. The two symbols at one distance give twice their tap, nothing
  * or minus twice it with weights ¼, ½, ¼.
+ *
+ * @param known whether one of the two nearest symbols is left out, as known
  */
-export function interference(rollOff: number): Interference {
+export function interference(rollOff: number, known = false): Interference {
   let atoms: Atom[] = [[0, 1]];
   let rest = tapPower(rollOff) / 2;
   for (let k = 0; k < pairs; k += 1) {
-    const step = Math.SQRT2 * tapAt(k, rollOff);
-    rest -= step ** 2 / 2;
-    atoms = atoms.flatMap(([value, weight]): Atom[] => [
-      [value - step, weight / 4],
-      [value, weight / 2],
-      [value + step, weight / 4],
-    ]);
+    const tap = Math.SQRT1_2 * tapAt(k, rollOff);
+    rest -= 2 * tap ** 2;
+    atoms = known && k === 0 ? withSymbol(atoms, tap) : withPair(atoms, tap);
   }
   return {
     values: Float64Array.from(atoms, ([value]) => value),
@@ -42,3 +40,16 @@ export function interference(rollOff: number): Interference {
     rest: Math.max(rest, 0),
   };
 }
+
+const withSymbol = (atoms: Atom[], tap: number): Atom[] =>
+  atoms.flatMap(([value, weight]): Atom[] => [
+    [value - tap, weight / 2],
+    [value + tap, weight / 2],
+  ]);
+
+const withPair = (atoms: Atom[], tap: number): Atom[] =>
+  atoms.flatMap(([value, weight]): Atom[] => [
+    [value - 2 * tap, weight / 4],
+    [value, weight / 2],
+    [value + 2 * tap, weight / 4],
+  ]);

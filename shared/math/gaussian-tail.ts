@@ -1,7 +1,7 @@
 import erfc from '@stdlib/math-base-special-erfc';
 import { gaussLegendre } from './gauss-legendre';
 
-const rule = gaussLegendre(16);
+const [fine, coarse] = [gaussLegendre(16), gaussLegendre(8)];
 /** Deviations beyond which the Gaussian under an integral is left out: 3e-12 of what stands before. */
 const reach = 7;
 const halfRoot = Math.SQRT1_2;
@@ -27,17 +27,18 @@ export function owensT(h: number, a: number): number {
   return (near + far) / 2 - near * far - tailBetween(a * h, 0, 1 / a);
 }
 
-/** 1/(2π) ∫ exp(−h²(1 + x²)/2)/(1 + x²) dx between two bounds of 0 to 1. */
+/** 1/(2π) ∫ exp(−h²(1 + x²)/2)/(1 + x²) dx between two bounds of −1 to 1. */
 function tailBetween(h: number, from: number, to: number): number {
-  const end = h * to > reach ? Math.min(to, Math.sqrt(from * from + (reach / h) ** 2)) : to;
+  const end = from >= 0 && h * to > reach ? Math.min(to, Math.sqrt(from * from + (reach / h) ** 2)) : to;
   const half = (end - from) / 2;
+  const { nodes, weights } = half < 0.35 && h * half < 1 ? coarse : fine;
   const middle = from + half;
   const square = -0.5 * h * h;
   let sum = 0;
-  for (let i = 0; i < rule.nodes.length; i += 1) {
-    const x = middle + half * rule.nodes[i]!;
+  for (let i = 0; i < nodes.length; i += 1) {
+    const x = middle + half * nodes[i]!;
     const secant = 1 + x * x;
-    sum += (rule.weights[i]! * Math.exp(square * secant)) / secant;
+    sum += (weights[i]! * Math.exp(square * secant)) / secant;
   }
   return perTurn * half * sum;
 }
@@ -47,6 +48,7 @@ function tailBetween(h: number, from: number, to: number): number {
  * straight edge at distance h hides, weighted by the Gaussian beyond it.
  */
 export function edgeTail(h: number, from: number, to: number): number {
-  if (from < 0) return to > 0 ? owensT(h, -from) + owensT(h, to) : edgeTail(h, -to, -from);
-  return to <= 1 ? tailBetween(h, from, to) : owensT(h, to) - owensT(h, from);
+  if (from < 0 && to <= 0) return edgeTail(h, -to, -from);
+  if (to <= 1 && from >= -1 && (from >= 0 || h < 3)) return tailBetween(h, from, to);
+  return from < 0 ? owensT(h, -from) + owensT(h, to) : owensT(h, to) - owensT(h, from);
 }
