@@ -1,3 +1,4 @@
+import { createSecretKey } from 'node:crypto';
 import type { Request, RequestHandler } from 'express';
 import passportModule from 'passport';
 import { ExtractJwt, Strategy, type StrategyOptionsWithoutRequest, type VerifiedCallback } from 'passport-jwt';
@@ -12,7 +13,8 @@ export function authenticate(sessions: SessionsService, secret: string): Request
   const passport = new passportModule.Passport();
   const options: StrategyOptionsWithoutRequest = {
     jwtFromRequest: ExtractJwt.fromAuthHeaderAsBearerToken(),
-    secretOrKey: secret,
+    // A string would be tried as a public key first, with every request.
+    secretOrKey: createSecretKey(secret, 'utf8') as unknown as Buffer,
     algorithms: [accessTokenAlgorithm],
     audience: accessTokenAudience,
   };

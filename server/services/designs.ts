@@ -33,7 +33,7 @@ function digestOfDesign({ engine, plan, carrier, clock }: Worked): string {
  * @throws {ParameterError} with a pointer into the plan
  */
 export function designOf(plan: Plan, map: RegisterMap | undefined): Design {
-  const worked = workOut(completed(plan));
+  const worked = workOut(plan);
   const digest = digestOfDesign(worked);
   if (!map) return { ...worked, digest };
   const bound = bindingFindings(map, quantitiesOf({ plan: worked.plan, design: worked }));

@@ -29,9 +29,19 @@ type Values = ReadonlyMap<string, QuantityValue>;
 
 const lowOf = (field: Field): number => field.quantityLow ?? 0;
 
-/** Fields of the whole map that hold a part of the same quantity. */
-const partsOf = (map: RegisterMap, quantity: string): Field[] =>
-  map.registers.flatMap(({ fields }) => fields.filter((field) => field.quantity === quantity && isPlaced(field)));
+/** Fields of the whole map that hold a part of a quantity, by its path. */
+type Parts = ReadonlyMap<string, readonly Field[]>;
+
+function partsOf(map: RegisterMap): Parts {
+  const parts = new Map<string, Field[]>();
+  for (const field of map.registers.flatMap(({ fields }) => fields)) {
+    if (field.quantity === undefined || !isPlaced(field)) continue;
+    const known = parts.get(field.quantity);
+    if (known) known.push(field);
+    else parts.set(field.quantity, [field]);
+  }
+  return parts;
+}
 
 /** Where a quantity is split over fields, only the part with the highest bits must hold its sign and its end. */
 function fitFault(value: bigint, field: Field, parts: readonly Field[]): string | undefined {
@@ -52,11 +62,11 @@ function codeOf(field: Field, quantity: QuantityValue): bigint | undefined {
   return code === undefined ? undefined : BigInt(code);
 }
 
-function boundValue(map: RegisterMap, field: Field, quantity: QuantityValue): FieldValue {
+function boundValue(parts: Parts, field: Field, quantity: QuantityValue): FieldValue {
   const code = codeOf(field, quantity);
   if (code === undefined)
     return { ...keptValue(field), quantity, fault: `its table of codes lacks ${quantity.choice}` };
-  const fault = fitFault(code, field, partsOf(map, quantity.path));
+  const fault = fitFault(code, field, parts.get(quantity.path) ?? []);
   const raw = rawBits(code >> BigInt(lowOf(field)), field);
   // A lower part has no sign of its own: its bits are shown as they stand.
   const value = fitsField(code >> BigInt(lowOf(field)), field) ? code >> BigInt(lowOf(field)) : BigInt(raw);
@@ -68,10 +78,10 @@ function keptValue(field: Field): FieldValue {
   return { field, value, raw: rawBits(value, field) };
 }
 
-function fieldValue(map: RegisterMap, field: Field, values: Values): FieldValue {
+function fieldValue(parts: Parts, field: Field, values: Values): FieldValue {
   if (!isPlaced(field)) return { field, value: 0n, raw: 0 };
   const quantity = field.quantity === undefined ? undefined : values.get(field.quantity);
-  return quantity ? boundValue(map, field, quantity) : keptValue(field);
+  return quantity ? boundValue(parts, field, quantity) : keptValue(field);
 }
 
 /**
@@ -83,8 +93,9 @@ function fieldValue(map: RegisterMap, field: Field, values: Values): FieldValue 
  */
 export function registerValues(map: RegisterMap, quantities: readonly QuantityValue[]): RegisterValue[] {
   const values: Values = new Map(quantities.map((quantity) => [quantity.path, quantity]));
+  const parts = partsOf(map);
   return map.registers.map((register) => {
-    const fields = register.fields.map((field) => fieldValue(map, field, values));
+    const fields = register.fields.map((field) => fieldValue(parts, field, values));
     const value = fields
       .filter(({ field }) => isPlaced(field))
       .reduce((word, { field, raw }) => withField(word, field, raw), register.reserved ?? 0);
@@ -106,7 +117,8 @@ function rangeFinding(register: Register, { field, quantity, fault }: FieldValue
 }
 
 function unboundFinding(map: RegisterMap, quantities: readonly QuantityValue[]): Finding[] {
-  const missing = quantities.filter(({ required, path }) => required && partsOf(map, path).length === 0);
+  const parts = partsOf(map);
+  const missing = quantities.filter(({ required, path }) => required && !parts.has(path));
   if (map.registers.length === 0 || missing.length === 0) return [];
   const more = missing.length > 1 ? ` and ${missing.length - 1} more` : '';
   return [

@@ -27,12 +27,17 @@ function valueOf<Source>(quantity: Quantity, definition: Definition<Source>, sou
   const read = definition.read(source);
   const choice = typeof read === 'string' ? read : undefined;
   const value = typeof read === 'string' ? BigInt(quantity.choices?.indexOf(read) ?? -1) : BigInt(read);
+  // Checks of a map read neither width nor meaning.
   return {
     ...quantity,
     value,
     ...(choice !== undefined && { choice }),
-    widthBits: widthOf(value, quantity.signed),
-    meaning: choice ?? definition.meaning?.(source) ?? '',
+    get widthBits() {
+      return widthOf(value, quantity.signed);
+    },
+    get meaning() {
+      return choice ?? definition.meaning?.(source) ?? '';
+    },
     required: definition.required?.(source) ?? false,
   };
 }
