@@ -1,11 +1,12 @@
 import type { LoopDesign } from '../model/design';
 import { clockAcquisition } from '../budget/loop-acquisition';
 import { clockDetector } from '../detectors/clock';
+import { interpolatorError } from '../detectors/interpolator-error';
+import { polyphaseBank } from '../detectors/polyphase-bank';
 import { errorStatistics, sCurve } from '../detectors/detector';
 import { clockHeadroom, largestErrorHeldPpm, rateResolutionHz } from '../fixed-point/clock-headroom';
 import { clockGains, clockOscillatorGain } from '../fixed-point/loop-scale';
 import { clockWords } from '../fixed-point/words';
-import type { ClockWords } from '../fixed-point/words';
 import type { CompleteClock, CompletePlan } from '../plan/complete';
 import { askedErrorPpm } from '../plan/required-offset';
 import { ParameterError } from '../parameter-error';
@@ -21,7 +22,13 @@ export function clockLoop(plan: CompletePlan, clock: CompleteClock): LoopDesign 
   const stages = solveStages('clock', clock, symbolRateBd);
   const counted = averagedSymbols(clock.updateInterval);
   const detectorGain = counted * model.gain;
-  const words = clockWords({ signal, clock: realisable(clock), detectorGain, stages: wordStages(stages) });
+  const words = clockWords({
+    signal,
+    clock: realisable(clock),
+    bank: bankOf(signal, clock),
+    detectorGain,
+    stages: wordStages(stages),
+  });
   requireLimit(words, '/clock/arithmetic/integratorLimitPpm');
   const oscillatorGain = clockOscillatorGain(words, samplesPerSymbol);
   const designs = stageDesigns({
@@ -58,7 +65,12 @@ export function clockLoop(plan: CompletePlan, clock: CompleteClock): LoopDesign 
       first: designs[0]!,
       held: largestErrorHeldPpm(words, samplesPerSymbol),
     }),
-    interpolator: null,
+    interpolator: interpolatorError({
+      interpolator: clock.interpolator,
+      rollOff: signal.rollOff,
+      samplesPerSymbol,
+      ...clock.counter,
+    }),
     resolutionHz: rateResolutionHz(words, { symbolRateBd, samplesPerSymbol }),
     words,
   };
@@ -74,9 +86,10 @@ function realisable(clock: CompleteClock) {
   if (detector === 'early-late') {
     throw new ParameterError('/clock/detector', 'early-late has no integer datapath; take gardner');
   }
-  return {
-    ...clock,
-    detector,
-    interpolator: clock.interpolator as ClockWords['interpolator'],
-  };
+  return { ...clock, detector };
 }
+
+const bankOf = ({ rollOff, samplesPerSymbol }: CompletePlan['signal'], { interpolator, counter }: CompleteClock) =>
+  interpolator === 'polyphase'
+    ? polyphaseBank({ rollOff, samplesPerSymbol, fractions: 2 ** counter.fractionBits })
+    : undefined;

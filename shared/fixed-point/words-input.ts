@@ -71,6 +71,8 @@ export interface ClockWordsInput {
     counter: { widthBits: number; fractionBits: number; tableBits: number };
     arithmetic: { integratorLimitPpm?: number };
   };
+  /** Coefficients of a polyphase bank for each fraction, in ones; no other interpolator has one. */
+  bank?: readonly (readonly number[])[] | undefined;
   /** Slope Kd at lock, detector units per symbol period, U symbols counted together when U > 1. */
   detectorGain: number;
   stages: readonly WantedStage[];

@@ -6,6 +6,7 @@ import { timingLsbLog2 } from './datapath/timing-detector';
 import { exactRatio, floorOf, nearestOf, product, quotient, type Ratio } from './exact-ratio';
 import { toStored, wrapUnsigned } from './format';
 import { gainWord } from './gain-words';
+import { bankTable } from './interpolator-table';
 import { carrierOscillatorGain, clockOscillatorGain, errorLsb } from './loop-scale';
 import { symmetry, type Modulation } from './symmetry';
 import type {
@@ -64,7 +65,7 @@ export function carrierWords({ signal, carrier, detectorGain, stages }: CarrierW
  *
  * @throws {ParameterError} with a pointer into the plan for what the datapath cannot hold
  */
-export function clockWords({ signal, clock, detectorGain, stages }: ClockWordsInput): ClockWords {
+export function clockWords({ signal, clock, bank, detectorGain, stages }: ClockWordsInput): ClockWords {
   const { counter } = clock;
   requirePositive({ detectorGain });
   const shared = commonWords('/clock', signal, clock);
@@ -78,6 +79,7 @@ export function clockWords({ signal, clock, detectorGain, stages }: ClockWordsIn
     loop: 'clock',
     detector: clock.detector,
     interpolator: clock.interpolator,
+    ...(bank && { taps: bankTable(bank, counter.tableBits) }),
     hold: clock.hold,
     ...shared,
     tableBits: counter.tableBits,

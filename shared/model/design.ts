@@ -877,7 +877,11 @@ export interface InterpolatorError {
    */
   signalOverErrorDb: number;
   /**
-   * Worst error over the signal band and all fractions, dB below the signal.
+   * The same with the coefficients of the table and the bits of the fractional interval, dB.
+   */
+  tableSignalOverErrorDb: number;
+  /**
+   * Worst error over the signal band and all fractions, over the signal of that frequency, dB; −10 is a third of its amplitude.
    */
   worstErrorDb: number;
   /**
@@ -885,7 +889,7 @@ export interface InterpolatorError {
    */
   frequency: number[];
   /**
-   * Error over the fractions, rms, dB; one value for each point.
+   * Error over the signal of that frequency, rms over the fractions, dB; one value for each point, null where there is none.
    */
   errorDb: (number | null)[];
   /**

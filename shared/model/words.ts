@@ -235,7 +235,14 @@ export interface ClockWords {
   /**
    * Interpolator.
    */
-  interpolator: 'linear' | 'parabolic' | 'cubic';
+  interpolator: 'linear' | 'parabolic' | 'cubic' | 'polyphase';
+  /**
+   * Table of a polyphase bank, one entry a fraction μ/2^F, rising from μ = 0; every other interpolator follows from its name.
+   *
+   * @minItems 2
+   * @maxItems 1024
+   */
+  taps?: number[][];
   /**
    * The control word acts on every sample of a symbol.
    */

@@ -50,7 +50,6 @@ describe('requireConsistent', () => {
       },
       '/environment/phaseNoise/1/0',
     ],
-    [{ clock: { interpolator: 'polyphase' } }, '/clock/interpolator'],
   ])('refuses %o at %s', (parts, parameter) => {
     const check = (): void => requireConsistent(completePlan(samplePlan(parts)));
     expect(check).toThrow(expect.objectContaining({ parameter }));
