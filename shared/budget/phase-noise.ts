@@ -1,13 +1,19 @@
-import { circlePoints, logarithmicPoints, responsePowers } from '../loop/frequency-response';
+import { circlePoints, responsePowers } from '../loop/frequency-response';
 import type { CirclePoints } from '../loop/frequency-response';
 import type { LinearLoop } from '../loop/linear-loop';
+import { gaussLegendre } from '../math/gauss-legendre';
 
 /** Oscillator phase noise: [offset Hz, dBc/Hz], offsets rising, at least two. */
 export type PhaseNoiseTable = readonly (readonly [offsetHz: number, levelDbc: number])[];
 
-const gridPoints = 240;
-/** Where the integration starts, below every loop and every offset of the table. */
-const decadesBelow = 3;
+/** Where the integration starts, over the slowest loop: below it |1 − H|² falls by 40 dB a decade or more. */
+const below = 1e-3;
+const rule = gaussLegendre(6);
+/** Widest panel, over ln ω, and most change of ln(S_φ·f) in one. */
+const widestPanel = 0.8;
+const steepestPanel = 7;
+/** Most turn of z^(1+D) in a panel, radians. */
+const mostTurn = 5;
 
 /**
  * One-sided spectral density of phase S_φ(f) = 2·10^(L(f)/10), rad²/Hz: straight lines between the points of the
@@ -35,6 +41,9 @@ export interface PhaseNoiseGrid {
 }
 
 /**
+ * Panels over ln ω that end where the table has a point, six Gauss points each: within a panel S_φ is a power of f, and
+ * |1 − H|² is smooth.
+ *
  * @param loop any loop of the family
  * @param slowestOmega the lowest loop frequency that will be asked for, radians per update
  */
@@ -44,15 +53,40 @@ export function phaseNoiseGrid(
   slowestOmega: number,
   updateRateHz: number,
 ): PhaseNoiseGrid {
-  const low = Math.min(slowestOmega, 1) * 10 ** -decadesBelow;
-  const omega = logarithmicPoints(low, Math.PI, gridPoints);
-  const step = Math.log(Math.PI / low) / (gridPoints - 1);
-  const weights = omega.map((value, i) => {
-    const frequencyHz = (value / (2 * Math.PI)) * updateRateHz;
-    const share = i === 0 || i === gridPoints - 1 ? 0.5 : 1;
-    return phaseNoiseDensity(table, frequencyHz) * frequencyHz * step * share;
+  const perHz = (2 * Math.PI) / updateRateHz;
+  const offsets = table.map(([offsetHz]) => perHz * offsetHz);
+  const low = Math.min(slowestOmega, 1, offsets[0] as number) * below;
+  const ends = [low, ...offsets.filter((offset) => offset > low && offset < Math.PI), Math.PI];
+  const omega: number[] = [];
+  const widths: number[] = [];
+  for (let i = 1; i < ends.length; i += 1) {
+    for (const [from, to] of panels(table, loop, [ends[i - 1] as number, ends[i] as number], perHz)) {
+      const [middle, reach] = [Math.sqrt(from * to), Math.log(to / from) / 2];
+      rule.nodes.forEach((node) => omega.push(middle * Math.exp(reach * node)));
+      rule.weights.forEach((weight) => widths.push(reach * weight));
+    }
+  }
+  const weights = Float64Array.from(widths, (width, i) => {
+    const frequencyHz = (omega[i] as number) / perHz;
+    return phaseNoiseDensity(table, frequencyHz) * frequencyHz * width;
   });
-  return { points: circlePoints(loop, omega), weights };
+  return { points: circlePoints(loop, Float64Array.from(omega)), weights };
+}
+
+/** Cuts the stretch between two points of the table into panels. */
+function panels(table: PhaseNoiseTable, loop: LinearLoop, [from, to]: [number, number], perHz: number) {
+  const span = Math.log(to / from);
+  const middle = phaseNoiseDensity(table, Math.sqrt(from * to) / perHz);
+  const near = phaseNoiseDensity(table, (from * Math.exp(span / 4)) / perHz);
+  const slope = Math.abs((4 * Math.log(middle / near)) / span + 1);
+  const width = Math.min(widestPanel, steepestPanel / Math.max(slope, 1e-9));
+  const cuts = [from];
+  for (let at = from; at < to;) {
+    const turning = Math.log(1 + mostTurn / ((1 + loop.delay) * at));
+    at *= Math.exp(Math.min(width, turning));
+    cuts.push(at < to * (1 - 1e-9) ? at : to);
+  }
+  return cuts.slice(1).map((cut, i): [number, number] => [cuts[i] as number, cut]);
 }
 
 /**

@@ -12,9 +12,7 @@ import type { CarrierWords } from '../fixed-point/words';
 import type { CompleteCarrier, CompletePlan } from '../plan/complete';
 import { askedOffsetHz } from '../plan/required-offset';
 import { requireLimit, solveStages, stageDesigns, wordStages } from './loop-design';
-import type { SolvedStages } from './loop-design';
 import { averagedSymbols } from '../loop/stage-loop';
-import type { StageLoop } from '../loop/stage-loop';
 
 /** The carrier recovery loop of a plan, worked out. */
 export function carrierLoop(plan: CompletePlan, carrier: CompleteCarrier): LoopDesign {
@@ -41,7 +39,7 @@ export function carrierLoop(plan: CompletePlan, carrier: CompleteCarrier): LoopD
     detector: detectorOf(carrier, model, oscillatorGain),
     stages: designs,
     headroom: headroomOf(plan, words, carrier),
-    budget: budgetOf(plan, carrier, { model, stages, updateRateHz }),
+    budget: carrierBudget({ plan, carrier, model, solved: stages.solved, words }),
     acquisition: carrierAcquisition({ plan, model, first: designs[0]!, held }),
     interpolator: null,
     resolutionHz: frequencyResolutionHz(words, signal.symbolRateBd),
@@ -71,27 +69,5 @@ function headroomOf({ signal, environment }: CompletePlan, words: CarrierWords, 
     esN0Db: signal.esN0Db,
     largestOffsetHz: askedOffsetHz(environment) ?? 0,
     stageNames: carrier.stages.map(({ name }) => name),
-  });
-}
-
-interface BudgetParts {
-  model: DetectorModel;
-  stages: SolvedStages;
-  updateRateHz: number;
-}
-
-function budgetOf(plan: CompletePlan, carrier: CompleteCarrier, { model, stages, updateRateHz }: BudgetParts) {
-  const last = stages.solved[stages.solved.length - 1] as StageLoop;
-  return carrierBudget({
-    model,
-    stages: stages.solved.map(({ loop }, i) => ({ name: carrier.stages[i]!.name, loop })),
-    damping: last.damping ?? 1,
-    method: carrier.method,
-    prewarp: carrier.prewarp,
-    form: carrier.thirdOrder,
-    updateInterval: carrier.updateInterval,
-    updateRateHz,
-    phaseNoise: plan.environment.phaseNoise,
-    limit: plan.limits.phaseJitterDeg,
   });
 }

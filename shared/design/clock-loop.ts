@@ -1,4 +1,5 @@
 import type { LoopDesign } from '../model/design';
+import { clockBudget } from '../budget/clock-budget';
 import { clockAcquisition } from '../budget/loop-acquisition';
 import { clockDetector } from '../detectors/clock';
 import { interpolatorError } from '../detectors/interpolator-error';
@@ -58,7 +59,7 @@ export function clockLoop(plan: CompletePlan, clock: CompleteClock): LoopDesign 
       offsetPpm: askedErrorPpm(plan.environment),
       samplesPerSymbol,
     }),
-    budget: null,
+    budget: clockBudget({ plan, clock, model, solved: stages.solved, words }),
     acquisition: clockAcquisition({
       plan,
       model,

@@ -3,7 +3,7 @@ import type { DoubleDouble } from '../math/double-double';
 import type { LinearLoop } from './linear-loop';
 
 /** A polynomial in z, highest power first, in double-double. */
-interface Polynomial {
+export interface Polynomial {
   high: Float64Array;
   low: Float64Array;
 }
@@ -60,7 +60,7 @@ function reduce(
 }
 
 /** target_i ← target_i − factor·source_i, the exact product and sum of `double-double` written out for speed. */
-function subtractProducts(target: Polynomial, factor: DoubleDouble, source: Polynomial, count: number): void {
+export function subtractProducts(target: Polynomial, factor: DoubleDouble, source: Polynomial, count: number): void {
   const shifted = splitter * factor.high;
   const factorHigh = shifted - (shifted - factor.high);
   const factorLow = factor.high - factorHigh;
@@ -82,10 +82,13 @@ function subtractProducts(target: Polynomial, factor: DoubleDouble, source: Poly
   }
 }
 
-const at = ({ high, low }: Polynomial, i: number): DoubleDouble => ({ high: high[i] as number, low: low[i] as number });
+export const at = ({ high, low }: Polynomial, i: number): DoubleDouble => ({
+  high: high[i] as number,
+  low: low[i] as number,
+});
 
 /** Terms from a power downward, laid into a polynomial of `length` coefficients that ends at power `lowest`. */
-function fromTerms(terms: DoubleDouble[], length: number, lowest: number): Polynomial {
+export function fromTerms(terms: DoubleDouble[], length: number, lowest: number): Polynomial {
   const polynomial = { high: new Float64Array(length), low: new Float64Array(length) };
   terms.forEach(({ high, low }, i) => {
     polynomial.high[length - lowest - terms.length + i] = high;
@@ -95,7 +98,7 @@ function fromTerms(terms: DoubleDouble[], length: number, lowest: number): Polyn
 }
 
 /** z^E·(z − 1)^n + M(z). */
-function closedLoopPolynomial(loop: LinearLoop): Polynomial {
+export function closedLoopPolynomial(loop: LinearLoop): Polynomial {
   const exponent = loop.delay + (loop.averaged > 1 ? 1 : 0);
   const integrators = [[1], [1, -1], [1, -2, 1], [1, -3, 3, -1]][loop.order] as number[];
   const forward = forwardInZ(loop);
@@ -121,7 +124,8 @@ function forwardInZ(loop: LinearLoop): DoubleDouble[] {
   );
 }
 
-function plainInZ({ gains, order }: LinearLoop): DoubleDouble[] {
+/** Σ g_m·(z − 1)^(n−m)·z^(m−1) in z, highest power first, exact. */
+export function plainInZ({ gains, order }: LinearLoop): DoubleDouble[] {
   const [g1, g2, g3] = [gains.g1, gains.g2, gains.g3].map(toDoubleDouble) as [DoubleDouble, DoubleDouble, DoubleDouble];
   if (order === 3) return [add(add(g1, g2), g3), negate(add(add(g1, g1), g2)), g1];
   if (order === 2) return [add(g1, g2), negate(g1)];

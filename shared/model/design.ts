@@ -687,9 +687,9 @@ export interface NcoSpurs {
    */
   truncationDeg: number;
   /**
-   * Worst spur of the phase truncation, dBc.
+   * Worst spur of the phase truncation, dBc; null where no bit is discarded.
    */
-  worstSpurDbc: number;
+  worstSpurDbc: number | null;
   /**
    * Frequency resolution, Hz.
    */
