@@ -21,30 +21,42 @@ export interface GainCrossing {
   phaseMargin: number;
 }
 
-/** |L|² and arg L, without wrapping, at ω in radians per update. */
-export function openLoop(loop: LinearLoop, omega: number): { power: number; phase: number } {
+/** |L|² at ω in radians per update. */
+export function openLoopPower({ gains: { g1, g2, g3 }, averaged }: LinearLoop, omega: number): number {
+  const [sine, cosine] = [Math.sin(omega / 2), Math.cos(omega / 2)];
+  const cotangent = cosine / (2 * sine);
+  const re = g1 + g2 / 2 + g3 * (1 / 4 - cotangent * cotangent);
+  const im = cotangent * (g2 + g3);
+  const sum = (re * re + im * im) / (4 * sine * sine);
+  if (averaged <= 1) return sum;
+  // |a + (1 − a)·z⁻¹|² = 1 − 4a(1 − a)·sin²(ω/2).
+  const weight = averagingWeight(averaged);
+  return sum * (1 - 4 * weight * (1 - weight) * sine * sine);
+}
+
+/** arg L, without wrapping, at ω in radians per update. */
+export function openLoopPhase(loop: LinearLoop, omega: number): number {
   const { g1, g2, g3 } = loop.gains;
   // y = 1 − z⁻¹ has 1/y = 1/2 − j·cot(ω/2)/2; the sum of gains over its powers keeps its angle within (−π, 0].
   const cotangent = 1 / (2 * Math.tan(omega / 2));
-  const re = g1 + g2 / 2 + g3 * (1 / 4 - cotangent ** 2);
-  const im = -cotangent * (g2 + g3);
-  const weight = averagingWeight(loop.averaged);
-  const averageRe = weight + (1 - weight) * Math.cos(omega);
-  const averageIm = -(1 - weight) * Math.sin(omega);
-  const chord = 2 * Math.sin(omega / 2);
-  const power = ((re ** 2 + im ** 2) * (averageRe ** 2 + averageIm ** 2)) / chord ** 2;
-  const angle = Math.atan2(im, re) + Math.atan2(averageIm, averageRe);
-  return { power, phase: angle - (1 + loop.delay) * omega - (Math.PI - omega) / 2 };
+  const angle = Math.atan2(-cotangent * (g2 + g3), g1 + g2 / 2 + g3 * (1 / 4 - cotangent * cotangent));
+  return angle + averagingPhase(loop.averaged, omega) - (1 + loop.delay) * omega - (Math.PI - omega) / 2;
+}
+
+function averagingPhase(averaged: number, omega: number): number {
+  if (averaged <= 1) return 0;
+  const weight = averagingWeight(averaged);
+  return Math.atan2(-(1 - weight) * Math.sin(omega), weight + (1 - weight) * Math.cos(omega));
 }
 
 /** Every frequency at which |L| passes 1. */
 export function gainCrossings(loop: LinearLoop): GainCrossing[] {
   if (loop.order === 0) return [];
-  const level = (x: number): number => Math.log(openLoop(loop, Math.exp(x)).power);
-  return signChanges(level, scanRange(loop)).map((x) => {
-    const omega = Math.exp(x);
-    return { omega, phaseMargin: Math.PI + openLoop(loop, omega).phase };
-  });
+  const level = (omega: number): number => openLoopPower(loop, omega) - 1;
+  return signChanges(level, scanRange(loop)).map((omega) => ({
+    omega,
+    phaseMargin: Math.PI + openLoopPhase(loop, omega),
+  }));
 }
 
 /** Margins of a loop with its delay, and how far its delay and its gain may grow. */
@@ -100,18 +112,18 @@ const largestOf = (values: readonly number[]): number | null => (values.length ?
 
 /** Ratios of the gain that put a pole on the unit circle: 1/|L| wherever L is real and negative. */
 function criticalRatios(loop: LinearLoop): number[] {
-  const turns = (x: number): number => (openLoop(loop, Math.exp(x)).phase + Math.PI) / (2 * Math.PI);
-  const crossings = wholeCrossings(turns, scanRange(loop)).map(Math.exp);
+  const turns = (omega: number): number => (openLoopPhase(loop, omega) + Math.PI) / (2 * Math.PI);
+  const crossings = wholeCrossings(turns, scanRange(loop));
   // L(−1) is real; it is negative for an even delay, and then the circle is left at z = −1.
   if (loop.delay % 2 === 0) crossings.push(Math.PI);
-  return crossings.map((omega) => 1 / Math.sqrt(openLoop(loop, omega).power));
+  return crossings.map((omega) => 1 / Math.sqrt(openLoopPower(loop, omega)));
 }
 
-/** Logarithms of the frequencies at which L is looked at: two decades below the crossing, up to just below π. */
+/** Frequencies at which L is looked at, radians per update: two decades below the crossing, up to just below π. */
 function scanRange({ gains: { g1, g2, g3 } }: LinearLoop): Float64Array {
   const crossing = Math.max(g1, Math.sqrt(g2), Math.cbrt(g3));
   const low = Math.min(crossing, 1) / 100;
-  return logarithmicPoints(low, Math.PI * (1 - 1e-7), 160).map(Math.log);
+  return logarithmicPoints(low, Math.PI * (1 - 1e-7), 160);
 }
 
 function signChanges(value: (x: number) => number, points: Float64Array): number[] {

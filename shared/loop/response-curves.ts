@@ -55,14 +55,15 @@ function decibels(power: number): number | null {
 function peakPower(loop: LinearLoop, omega: Float64Array, h: Float64Array): number {
   const top = h.reduce((best, value, i) => (value > (h[best] as number) ? i : best), 0);
   const [from, to] = [omega[Math.max(top - 1, 0)] as number, omega[Math.min(top + 1, omega.length - 1)] as number];
-  return Math.max(1, h[top] as number, largestBetween((value) => closedLoopPower(loop, value), from, to).value);
+  return Math.max(1, h[top] as number, largestBetween(closedLoopPower(loop), from, to, 24).value);
 }
 
 function halfPowerFrequency(loop: LinearLoop, omega: Float64Array, h: Float64Array): number | null {
   const below = h.findIndex((value) => value < 0.5);
   if (below < 1) return null;
   const from = omega[below - 1] as number;
-  return bisect((value) => closedLoopPower(loop, value) - 0.5, from, omega[below] as number) / (2 * Math.PI);
+  const power = closedLoopPower(loop);
+  return bisect((value) => power(value) - 0.5, from, omega[below] as number) / (2 * Math.PI);
 }
 
 /** Phase margin of these gains over every extra delay that a plan can ask for; null where the loop is unstable. */
