@@ -5,7 +5,7 @@ import { requireSense } from './clock-sense';
 import type { ClockSignal } from './clock-signal';
 import type { DetectorModel } from './detector';
 import { railsOf } from './rails';
-import { gardnerSlope, signCurve, signSlope } from './sign-timing';
+import { gardnerSlope, leastVariance, signCurve, signSlope } from './sign-timing';
 import { earlyLateOffset, timingCovariance } from './timing-covariance';
 import type { TimingSignal } from './timing-covariance';
 
@@ -87,8 +87,8 @@ function signDetector(detector: 'zero-crossing' | 'mueller-muller', { clean, noi
       `at this Es/N0 the signs of ${signal.modulation} leave ${detector} no slope; take gardner`,
     );
   }
-  const curve = signCurve(detector, noisy);
   const cleanCurve = () => cleanCurves({ detector, timing: clean, signal });
+  const curve = noisy.variance > leastVariance ? signCurve(detector, noisy) : cleanCurve();
   return {
     gain: scale * slope,
     gainWithoutNoise: scale * without,

@@ -87,11 +87,15 @@ function levelWaves(rail: Rail, taps: Float64Array, omega: number) {
   return {
     /** Σ_k w(k)ψ_k Π_(j≠k) φ_j + far·Π φ_j at this harmonic; then on to the next. */
     next(weights: Float64Array, far: number): number {
-      let [product, total] = [1, 0];
+      // Plain assignments: an array on each side would cost ten times as much here.
+      let product = 1;
+      let total = 0;
       for (let k = 0, at = 0; k < taps.length; k += 1) {
-        let [phi, psi] = [0, 0];
+        let phi = 0;
+        let psi = 0;
         for (let v = 0; v < levels.length; v += 1, at += 1) {
-          const [c, s] = [cos[at]!, sin[at]!];
+          const c = cos[at]!;
+          const s = sin[at]!;
           phi += shares[v]! * c;
           psi += shares[v]! * levels[v]! * s;
           cos[at] = c * cosTurn[at]! - s * sinTurn[at]!;

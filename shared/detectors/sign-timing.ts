@@ -36,8 +36,8 @@ export const gardnerSlope = (rollOff: number): number =>
 
 /** Points on half a period that the curve is worked out at: noise makes it smooth. */
 const curvePoints = (variance: number): number => (variance > 0.03 ? 12 : variance > 0.01 ? 24 : 32);
-/** Least noise of a rail that a whole curve is worked out for, 30 dB below the signal; beyond that a curve only turns more sharply. */
-const leastVariance = 5e-4;
+/** Least noise of a rail that a whole curve is worked out for, 30 dB below the signal; with less it only turns more sharply. */
+export const leastVariance = 5e-4;
 
 /** The S-curve of the same detectors, x symbols early, unit amplitude. */
 export function signCurve(detector: SignDetector, signal: TimingSignal): (x: number) => number {

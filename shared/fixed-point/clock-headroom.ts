@@ -4,14 +4,18 @@ import { toNumber } from './format';
 import { gainOf } from './gain-words';
 
 /**
- * Largest clock error that the integrator holds: Lim/(step0·2^G) with hold, an N-th of it without; no more than the
- * counter's step itself allows, ppm. 0 for order 1, which has no integrator.
+ * Largest clock error ± that the integrator holds: Lim/(step0·2^G) with hold, an N-th of it without; no more than the
+ * counter itself can step, ppm. 0 for order 1, which has no integrator, and for 1 sample per symbol: a counter that
+ * strobes at every sample cannot strobe faster.
  */
 export function largestErrorHeldPpm(words: ClockWords, samplesPerSymbol: number): number {
   if (words.order === 1) return 0;
   const most = words.integratorLimit === null ? 2 ** (words.integratorBits - 1) - 1 : toNumber(words.integratorLimit);
-  const lsb = most / 2 ** words.guardBits / toNumber(words.counter.nominalStep);
-  return Math.min(1, words.hold ? lsb : lsb / samplesPerSymbol) * 1e6;
+  const nominal = toNumber(words.counter.nominalStep);
+  // A step is 1 to 2^Wc − 1.
+  const room = Math.max(Math.min(nominal - 1, 2 ** words.counter.widthBits - 1 - nominal), 0);
+  const control = Math.min(most / 2 ** words.guardBits, room);
+  return ((words.hold ? control : control / samplesPerSymbol) / nominal) * 1e6;
 }
 
 /** Change of the symbol rate by one counter LSB, Hz. */

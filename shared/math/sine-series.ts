@@ -16,7 +16,12 @@ export function sineSeries(odd: (x: number) => number, period: number, points: n
 /** Σ share[n − 1]·sin(nθ) by Clenshaw's recurrence. */
 function sineSum(share: readonly number[], theta: number): number {
   const twice = 2 * Math.cos(theta);
-  let [before, sum] = [0, 0];
-  for (let n = share.length - 1; n >= 0; n -= 1) [before, sum] = [sum, share[n]! + twice * sum - before];
+  let before = 0;
+  let sum = 0;
+  for (let n = share.length - 1; n >= 0; n -= 1) {
+    const next = share[n]! + twice * sum - before;
+    before = sum;
+    sum = next;
+  }
   return sum * Math.sin(theta);
 }

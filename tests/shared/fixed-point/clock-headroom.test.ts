@@ -39,4 +39,25 @@ describe('largestErrorHeldPpm', () => {
   it('is never more than the counter can step', () => {
     expect(largestErrorHeldPpm(words({}), 2)).toBeLessThanOrEqual(1e6);
   });
+
+  // By hand, a wide integrator: the step of 2/3 of the counter's range can grow by half of itself; without hold one
+  // sample has to make up for all 1.5. A strobe at every sample cannot come earlier.
+  it.each([
+    [1.5, true, 0.5e6],
+    [1.5, false, 1e6 / 3],
+    [1, true, 0],
+    [2, false, 0.5e6],
+  ])('stops where the counter does: %f samples per symbol, hold %s', (samplesPerSymbol, hold, ppm) => {
+    const { clock } = workOut(
+      samplePlan({
+        signal: { samplesPerSymbol },
+        clock: {
+          detector: samplesPerSymbol < 2 ? 'mueller-muller' : 'gardner',
+          hold,
+          arithmetic: { integratorBits: 48 },
+        },
+      }),
+    );
+    expect(largestErrorHeldPpm(clock!.words as ClockWords, samplesPerSymbol)).toBeCloseTo(ppm, 1);
+  });
 });
