@@ -56,7 +56,7 @@ function unitDecision({ modulation, esN0, ringRatios }: CarrierSignal): Detector
     period,
     covariance: [variance],
     selfCovariance: [],
-    amplitudeExponent: exponentOf(slope, gain),
+    amplitudeExponent: exponentOf(slope),
     noisy: shortened(curve, { period, esN0, largest: largestMagnitude(modulation, ringRatios) }),
     noiseless,
   };
@@ -84,7 +84,8 @@ function decisionOf(modulation: Modulation, deviation: number, ringRatios: Carri
 }
 
 /** A signal g times as large sees thresholds 1/g as far out, and gives errors g times as large. */
-function exponentOf(slope: (stretch: number) => number, gain: number): number {
+function exponentOf(slope: (stretch: number) => number): number {
   const step = 10 ** (amplitudeStepDb / 20);
-  return (step * slope(1 / step) - slope(step) / step) / (gain * 2 * Math.log(step));
+  const [larger, smaller] = [slope(1 / step), slope(step)].map((value) => Math.max(value, leastSlope));
+  return 1 + Math.log(larger! / smaller!) / (2 * Math.log(step));
 }
