@@ -1,5 +1,6 @@
 import type { Design, LoopDesign } from './model/design';
 import type { Plan } from './model/plan';
+import { loopInteraction } from './budget/interaction';
 import { carrierLoop } from './design/carrier-loop';
 import { clockLoop } from './design/clock-loop';
 import { engineVersion } from './engine';
@@ -28,12 +29,21 @@ export function workOut(plan: Plan): WorkedOut {
     ...loops,
     findings: findingsOf(complete, loops),
     solutions: [],
-    interaction: null,
+    interaction: interactionOf(complete, loops),
   };
 }
 
-function loopsOf(plan: CompletePlan): { carrier?: LoopDesign; clock?: LoopDesign } {
-  const loops: { carrier?: LoopDesign; clock?: LoopDesign } = {};
+interface Loops {
+  carrier?: LoopDesign;
+  clock?: LoopDesign;
+}
+
+/** Null where there is one loop alone. */
+const interactionOf = (plan: CompletePlan, { carrier, clock }: Loops) =>
+  carrier && clock ? loopInteraction({ plan, carrier, clock }) : null;
+
+function loopsOf(plan: CompletePlan): Loops {
+  const loops: Loops = {};
   if (plan.carrier) loops.carrier = carrierLoop(plan, plan.carrier);
   if (plan.clock) loops.clock = clockLoop(plan, plan.clock);
   return loops;

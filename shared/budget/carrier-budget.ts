@@ -1,6 +1,7 @@
 import type { Budget } from '../model/design';
 import type { DetectorModel } from '../detectors/detector';
 import { rotationalSymmetry } from '../detectors/modulations';
+import { errorRateOf } from '../detectors/symbol-error-rate';
 import { carrierOscillatorGain } from '../fixed-point/loop-scale';
 import { frequencyResolutionHz } from '../fixed-point/headroom';
 import type { CarrierWords } from '../fixed-point/words';
@@ -8,6 +9,7 @@ import { averagedSymbols } from '../loop/stage-loop';
 import type { StageLoop } from '../loop/stage-loop';
 import type { CompleteCarrier, CompletePlan } from '../plan/complete';
 import { phaseBound } from './bounds';
+import { implementationLoss } from './implementation-loss';
 import { cycleSlip } from './cycle-slip';
 import { errorCovariance, randomVariance } from './jitter';
 import type { Disturbances } from './jitter';
@@ -55,7 +57,7 @@ export function carrierBudget(input: CarrierBudgetInput): Budget {
       worstSpurDbc: worstSpurDbc(words),
       resolutionHz: frequencyResolutionHz(words, plan.signal.symbolRateBd),
     },
-    implementationLoss: null,
+    implementationLoss: lossOf(last, plan.signal),
     slip: slipOf(last, plan.signal),
   };
 }
@@ -90,6 +92,17 @@ const driftOf = ({ terms }: LastStage, rateHzPerS: number): Budget['drift'] => (
   rateHzPerS,
   staticError: terms.drift === null ? null : degrees * Math.sqrt(terms.drift),
 });
+
+function lossOf({ terms }: LastStage, signal: CompletePlan['signal']): Budget['implementationLoss'] {
+  const variance = randomVariance(terms);
+  if (variance === null || terms.drift === null) return null;
+  return implementationLoss({
+    errorRate: errorRateOf(signal.modulation, signal),
+    esN0: 10 ** (signal.esN0Db / 10),
+    variance,
+    bias: Math.sqrt(terms.drift),
+  });
+}
 
 /** What is random of the jitter, against a period of 2π/M. */
 function slipOf({ terms, noiseBandwidth }: LastStage, { modulation, symbolRateBd }: CompletePlan['signal']) {

@@ -5,6 +5,7 @@ import { jitterTerms } from './jitter';
 import type { Disturbances, JitterTerms } from './jitter';
 import { leastJitter, rms, sweepAround, toSweep } from './jitter-sweep';
 import type { LoopFamily } from './loop-family';
+import { shortened } from './update-covariance';
 import type { WordNoise } from './word-noise';
 
 export interface JitterInput {
@@ -34,7 +35,7 @@ export function jitterBudget({ stages, family, disturbances, scale }: JitterInpu
   const terms = stages.map(({ loop, words }) => jitterTerms(loop, { ...disturbances, words }));
   const { loop, words } = stages.at(-1) as JitterInput['stages'][number];
   const own = noiseBandwidth(loop);
-  const input = { family, disturbances: { ...disturbances, words }, own: own ?? 0 };
+  const input = { family, disturbances: { ...drawn(disturbances), words }, own: own ?? 0 };
   const swept = own === null ? [] : sweepAround(input);
   return {
     jitter: {
@@ -45,6 +46,15 @@ export function jitterBudget({ stages, family, disturbances, scale }: JitterInpu
     last: { loop, terms: terms.at(-1) as JitterTerms, noiseBandwidth: own && own / disturbances.updateInterval },
   };
 }
+
+/** What a curve is drawn from: of a long covariance so many lags as show. */
+const drawn = (disturbances: JitterInput['disturbances']): JitterInput['disturbances'] => ({
+  ...disturbances,
+  error: disturbances.error && shortened(disturbances.error, drawnLags),
+  self: shortened(disturbances.self, drawnLags),
+});
+
+const drawnLags = 12;
 
 const termNames = ['thermal', 'selfNoise', 'oscillator', 'phaseQuantisation', 'wordQuantisation', 'drift'] as const;
 

@@ -1,5 +1,6 @@
-import type { LoopDesign } from '../model/design';
+import type { Budget, LoopDesign, StageDesign } from '../model/design';
 import { carrierBudget } from '../budget/carrier-budget';
+import { lockFigures } from '../budget/lock-figures';
 import { carrierAcquisition } from '../budget/loop-acquisition';
 import { carrierDetector } from '../detectors/carrier';
 import { largestSample } from '../detectors/largest-sample';
@@ -33,14 +34,20 @@ export function carrierLoop(plan: CompletePlan, carrier: CompleteCarrier): LoopD
     updateRateHz,
     amplitude: { toleranceDb: signal.amplitudeToleranceDb, exponent: model.amplitudeExponent },
   });
-  const held = largestOffsetHeldHz(words, signal.symbolRateBd);
+  const budget = carrierBudget({ plan, carrier, model, solved: stages.solved, words });
   return {
     updateRateHz,
     detector: detectorOf(carrier, model, oscillatorGain),
     stages: designs,
     headroom: headroomOf(plan, words, carrier),
-    budget: carrierBudget({ plan, carrier, model, solved: stages.solved, words }),
-    acquisition: carrierAcquisition({ plan, model, first: designs[0]!, held }),
+    budget,
+    acquisition: carrierAcquisition({
+      plan,
+      model,
+      stages: designs,
+      held: largestOffsetHeldHz(words, signal.symbolRateBd),
+      lockDetector: lockOf(plan, carrier, { budget, last: designs.at(-1)! }),
+    }),
     interpolator: null,
     resolutionHz: frequencyResolutionHz(words, signal.symbolRateBd),
     words,
@@ -70,4 +77,12 @@ function headroomOf({ signal, environment }: CompletePlan, words: CarrierWords, 
     largestOffsetHz: askedOffsetHz(environment) ?? 0,
     stageNames: carrier.stages.map(({ name }) => name),
   });
+}
+
+/** Null where the jitter of the last stage is not known. */
+function lockOf(plan: CompletePlan, carrier: CompleteCarrier, { budget, last }: { budget: Budget; last: StageDesign }) {
+  const total = budget.stages.at(-1)?.total ?? null;
+  const noiseBandwidth = last.noiseBandwidth.exact;
+  if (total === null || noiseBandwidth === null) return null;
+  return lockFigures({ plan, carrier, jitterVariance: (total * (Math.PI / 180)) ** 2, noiseBandwidth });
 }

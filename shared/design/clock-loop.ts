@@ -63,7 +63,7 @@ export function clockLoop(plan: CompletePlan, clock: CompleteClock): LoopDesign 
     acquisition: clockAcquisition({
       plan,
       model,
-      first: designs[0]!,
+      stages: designs,
       held: largestErrorHeldPpm(words, samplesPerSymbol),
     }),
     interpolator: interpolatorError({

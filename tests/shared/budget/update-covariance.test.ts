@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { loopVariances } from '../../../shared/budget/loop-energies';
-import { seenBySymbols, updateCovariance } from '../../../shared/budget/update-covariance';
+import { seenBySymbols, shortened, updateCovariance } from '../../../shared/budget/update-covariance';
 import { secondOrderGains } from '../../../shared/loop/gains';
 import { linearLoop } from '../../../shared/loop/linear-loop';
 import { gaussians } from './noise';
@@ -62,5 +62,16 @@ describe('the phase that symbols see', () => {
     const covariance = seenBySymbols(updateCovariance([1 + colour ** 2, colour], counted), counted);
     const [variance] = loopVariances(loop, [{ entry: 'error', covariance }])!;
     expect(Math.abs(simulated(gains, counted, colour, 3e6) / variance! - 1)).toBeLessThan(0.02);
+  });
+});
+
+describe('shortened', () => {
+  // By hand: Σ c over both sides and Σ l·c stay, 1 + 2·(0.5 + 0.25 + 0.125 + 0.0625) and 0.5 + 0.5 + 0.375 + 0.25.
+  it('keeps the spectrum at 0 and the first moment', () => {
+    const short = shortened([1, 0.5, 0.25, 0.125, 0.0625], 3);
+    expect(short.length).toBe(3);
+    expect(short[0]! + 2 * (short[1]! + short[2]!)).toBeCloseTo(2.875, 12);
+    expect(short[1]! + 2 * short[2]!).toBeCloseTo(1.625, 12);
+    expect(shortened([1, 0.5], 3)).toEqual([1, 0.5]);
   });
 });
