@@ -3,8 +3,8 @@ import { edgeTail, normalDensity, tail } from '../math/gaussian-tail';
 import { nearestIndex } from './decision-regions';
 import type { DecisionRegions } from './decision-regions';
 
-/** Borders farther than this many deviations from a sample decide nothing: 2e-11 of the samples reach so far. */
-const reach = 6.7;
+/** Borders farther than this many deviations from a sample decide nothing: 1e-9 of the samples reach so far. */
+const reach = 6.3;
 
 /**
  * What is told of a border by its index, lengths in deviations of the noise: its distance, positive on the side of
@@ -23,7 +23,9 @@ export function eachBorder(regions: DecisionRegions, deviation: number, [i, q]: 
     const along = normalI[k]! * q - normalQ[k]! * i;
     const first = (from[k]! - along) * scale;
     const last = (to[k]! - along) * scale;
-    if (first > reach || last < -reach) continue;
+    // The border's nearest point may be one of its ends.
+    const past = first > 0 ? first : last < 0 ? last : 0;
+    if (past * past + distance * distance > reach * reach) continue;
     // Rounding must not put a mean on one side of its own region's border and into the other region.
     const side = home === near[k] ? 1 : home === far[k] ? -1 : Math.sign(distance);
     take(k, distance, first, last, -side * hidden(Math.abs(distance), first, last));

@@ -12,7 +12,7 @@ export interface HeadroomInput {
   symbolRateBd: number;
   /** Amplitude A of the symbols, sample units, above 0. */
   amplitude: number;
-  /** Largest |a| of the modulation, with E|a|² = 1: 1 for PSK. */
+  /** Largest magnitude of a sample without noise over A: 1 for PSK. */
   peak: number;
   /** Es/N0 of the signal, dB. */
   esN0Db: number;
