@@ -1,31 +1,7 @@
 import type { LoopDesign, StageDesign } from '../../../shared/model/design';
-import { commonUnit, moveDecimals } from '../../../shared/quantities/format';
-
-/** A number in a cell and how many digits it earns. */
-export interface GainCell {
-  value: number | null;
-  decimals?: number;
-  significant?: number;
-  exponent?: boolean;
-  sign?: boolean;
-}
-
-export interface GainWordCell {
-  mantissa: number;
-  shift: number;
-}
-
-export interface GainRow {
-  label: string;
-  unit: string;
-  /** One cell for each stage; null where a number belongs to the loop as a whole and stands under the last stage. */
-  cells: (GainCell | GainWordCell | null)[];
-}
-
-export interface GainGroup {
-  title: string;
-  rows: GainRow[];
-}
+import { numberText } from '../../../shared/quantities/format';
+import { frequencies, present, row } from './group-rows';
+import type { GainGroup, GainRow } from './group-rows';
 
 /** Everything that a design says of a loop's stages: asked for, reached, gains, words. */
 export function gainGroups(loop: LoopDesign): GainGroup[] {
@@ -36,38 +12,12 @@ export function gainGroups(loop: LoopDesign): GainGroup[] {
     { title: 'Gains of the loop', rows: loopGainRows(stages) },
     { title: 'Gains, per detector unit', rows: detectorGainRows(stages, loop.detector.gain) },
     { title: 'Words', rows: wordRows(stages) },
-    { title: 'Detector and range', rows: rangeRows(loop) },
-  ];
+    { title: gainControl(stages), rows: amplitudeRows(stages) },
+  ].filter(({ rows }) => rows.length > 0);
 }
-
-type Read = (stage: StageDesign) => number | null | undefined;
-
-const row = (label: string, unit: string, style: Omit<GainCell, 'value'>, read: Read) => ({
-  of: (stages: readonly StageDesign[]): GainRow => ({
-    label,
-    unit,
-    cells: stages.map((stage) => ({ value: read(stage) ?? null, ...style })),
-  }),
-});
-
-/** A row of frequencies, all in the prefix that suits the largest. */
-const frequencies = (label: string, digits: number, read: Read) => ({
-  of: (stages: readonly StageDesign[]): GainRow => {
-    const values = stages.map((stage) => read(stage) ?? 0);
-    const { unit, exponent } = commonUnit(values, 'Hz');
-    return row(label, unit, { decimals: digits }, (stage) => moved(read(stage), -exponent)).of(stages);
-  },
-});
-
-const moved = (value: number | null | undefined, exponent: number): number | null =>
-  value === null || value === undefined ? null : moveDecimals(value, exponent);
 
 const percent = (value: number | null): number | null => (value === null ? null : 100 * value);
 const decibels = (ratio: number | null): number | null => (ratio === null ? null : 20 * Math.log10(ratio));
-
-/** Rows that no stage has a value for are left out: ζ of a third-order loop. */
-const present = (rows: GainRow[]): GainRow[] =>
-  rows.filter(({ cells }) => cells.some((cell) => cell && ('mantissa' in cell || cell.value !== null)));
 
 function askedRows(stages: readonly StageDesign[]): GainRow[] {
   return present([
@@ -83,9 +33,14 @@ function reachedRows(stages: readonly StageDesign[]): GainRow[] {
     ...present([row('Damping ζ', '', { decimals: 6 }, (stage) => stage.damping.exact).of(stages)]),
     ...present([frequencies('Natural frequency', 3, (stage) => stage.naturalFrequencyHz.exact).of(stages)]),
     row('Phase margin', '°', { decimals: 1 }, (stage) => stage.margins.phaseDeg).of(stages),
-    row('Gain margin', 'dB', { decimals: 1 }, (stage) => decibels(stage.margins.gainUp)).of(stages),
+    row('Gain margin up', 'dB', { decimals: 1 }, (stage) => decibels(stage.margins.gainUp)).of(stages),
+    ...present([
+      row('Gain margin down', 'dB', { decimals: 1 }, (stage) => decibels(stage.margins.gainDown)).of(stages),
+    ]),
+    frequencies('3 dB bandwidth of H', 2, (stage) => stage.bandwidth3DbHz).of(stages),
     row('Peaking of H', 'dB', { decimals: 2 }, (stage) => stage.peakingDb).of(stages),
     row('Settles to 2 %', 'updates', { decimals: 0 }, (stage) => stage.settlingUpdates).of(stages),
+    row('Overshoot', '%', { decimals: 1 }, (stage) => percent(stage.overshoot)).of(stages),
     row('Stable up to delay', 'updates', { decimals: 0 }, (stage) => stage.largestDelay).of(stages),
   ];
 }
@@ -125,7 +80,11 @@ function wordRows(stages: readonly StageDesign[]): GainRow[] {
     ...words('Second integral', 'integral2', stages),
     row('BnT from words', '', { decimals: 6 }, (stage) => stage.noiseBandwidth.effective).of(stages),
     row('Error of BnT', '%', { decimals: 3, sign: true }, (stage) => percent(stage.bandwidthError)).of(stages),
-    ...present([row('ζ from words', '', { decimals: 6 }, (stage) => stage.damping.effective).of(stages)]),
+    ...present([
+      row('ζ from words', '', { decimals: 6 }, (stage) => stage.damping.effective).of(stages),
+      row('Error of ζ', '%', { decimals: 3, sign: true }, (stage) => percent(stage.dampingError)).of(stages),
+    ]),
+    row('Phase margin from words', '°', { decimals: 1 }, (stage) => stage.effectivePhaseDeg).of(stages),
   ];
 }
 
@@ -138,45 +97,18 @@ function words(
   return cells.length === stages.length ? [{ label, unit: '', cells }] : [];
 }
 
-type Whole = Omit<GainCell, 'value'> & { value: number | null };
+const gainControl = ([stage]: readonly StageDesign[]): string =>
+  `With the amplitude ${numberText(stage?.amplitude.high.amplitudeDb ?? 0)} dB low and high`;
 
-/** What belongs to the loop and to no single stage: the slope at lock, and how far off it may start. */
-function rangeRows({ detector, stages, acquisition, resolutionHz }: LoopDesign): GainRow[] {
-  const { unambiguousHz, falseLockSpacingHz, offsetHz, largestOffsetHz, lockInHz, pullInSymbols, pullInRangeHz } =
-    acquisition;
-  const { offsetPpm, largestOffsetPpm } = acquisition;
-  const put = (label: string, unit: string, cell: Whole): GainRow => ({
-    ...{ label, unit },
-    cells: stages.map((_, index) => (index === stages.length - 1 ? cell : null)),
-  });
-  const hertz = (label: string, value: number | null): GainRow => {
-    const { value: shown, unit } = inPrefix(value);
-    return put(label, unit, { value: shown, decimals: 2 });
-  };
+/** The loop at both ends of the gain control's error; nothing to say where it has none. */
+function amplitudeRows(stages: readonly StageDesign[]): GainRow[] {
+  if (stages.every(({ amplitude }) => amplitude.high.amplitudeDb === 0)) return [];
   return present([
-    put('Slope at lock Kd', '', { value: detector.gain, decimals: 4 }),
-    hertz('One LSB', resolutionHz),
-    hertz('Unambiguous below', unambiguousHz),
-    hertz('False locks every', falseLockSpacingHz),
-    hertz('Offset to expect', offsetHz || null),
-    hertz('Offset held', largestOffsetHz),
-    put('Rate error to expect', 'ppm', { value: offsetPpm || null, decimals: 1 }),
-    put('Rate error held', 'ppm', { value: largestOffsetPpm, decimals: 1 }),
-    hertz('Lock-in, estimate', lockInHz),
-    hertz('Pull-in range, estimate', pullInRangeHz),
-    put('Pull-in, estimate', 'symbols', { value: pullInSymbols || null, decimals: 0 }),
+    row('BnT, low', '', { decimals: 6 }, ({ amplitude }) => amplitude.low.noiseBandwidth).of(stages),
+    row('BnT, high', '', { decimals: 6 }, ({ amplitude }) => amplitude.high.noiseBandwidth).of(stages),
+    row('Damping ζ, low', '', { decimals: 4 }, ({ amplitude }) => amplitude.low.damping).of(stages),
+    row('Damping ζ, high', '', { decimals: 4 }, ({ amplitude }) => amplitude.high.damping).of(stages),
+    row('Phase margin, low', '°', { decimals: 1 }, ({ amplitude }) => amplitude.low.phaseDeg).of(stages),
+    row('Phase margin, high', '°', { decimals: 1 }, ({ amplitude }) => amplitude.high.phaseDeg).of(stages),
   ]);
-}
-
-function inPrefix(value: number | null): { value: number | null; unit: string } {
-  const { unit, exponent } = commonUnit([value ?? 0], 'Hz');
-  return { value: moved(value, -exponent), unit };
-}
-
-/** Characters that a cell sets behind its point, the point and the exponent included: what aligns a column. */
-export function widthBehindPoint(cell: GainCell | GainWordCell | null): number {
-  if (!cell) return 0;
-  if ('mantissa' in cell) return 3;
-  if (cell.exponent) return (cell.significant ?? 1) + 3;
-  return cell.decimals ? cell.decimals + 1 : 0;
 }

@@ -61,6 +61,15 @@ export interface Marker {
   shape?: 'dot' | 'cross' | undefined;
 }
 
+/** A line that may turn back on itself: a root locus. It has no single height over x, and so no reading. */
+export interface Path {
+  label: string;
+  tone: Tone;
+  points: readonly (readonly [number, number])[];
+  /** What changes along it, one value for each point. */
+  along: readonly number[];
+}
+
 export const toneClass: Readonly<Record<Tone, string>> = { track: 'trk', acquire: 'acq', ink: 'ink', soft: 'sof' };
 
 /** Everything that a plot draws. */
@@ -71,6 +80,9 @@ export interface PlotData {
   bands: readonly Band[];
   limits: readonly Limit[];
   markers: readonly Marker[];
+  paths?: readonly Path[] | undefined;
+  /** What changes along the paths. */
+  pathsOver?: string | undefined;
 }
 
 export const axisName = ({ label, unit }: Axis): string => [label, unit].filter(Boolean).join(', ');

@@ -15,7 +15,7 @@ export function abscissas({ series, markers }: PlotData): number[] {
 
 /** The data of a plot as tables: curves side by side over x, then the marks with their intervals. */
 export function plotTables(data: PlotData): PlotTable[] {
-  return [curveTable(data), markTable(data)].filter((table) => table.rows.length > 0);
+  return [curveTable(data), markTable(data), pathTable(data)].filter((table) => table.rows.length > 0);
 }
 
 function curveTable({ series, x }: PlotData): PlotTable {
@@ -42,6 +42,14 @@ function markTable({ markers, x, y }: PlotData): PlotTable {
   return {
     head: [axisName(x), axisName(y), ...(bars ? ['low', 'high'] : [])],
     rows: markers.map((mark) => [mark.x, mark.y, ...(bars ? [mark.low, mark.high] : [])]),
+  };
+}
+
+/** Every line point by point, what changes along it first. */
+function pathTable({ x, y, paths = [], pathsOver = '' }: PlotData): PlotTable {
+  return {
+    head: ['line', pathsOver, axisName(x), axisName(y)],
+    rows: paths.flatMap(({ points, along }, line) => points.map(([px, py], at) => [line + 1, along[at], px, py])),
   };
 }
 

@@ -1,5 +1,5 @@
 import type { StageDesign } from '../../../../shared/model/design';
-import type { Axis, Limit, Marker, Series, Tone } from '../../plot/plot-model';
+import type { Axis, Limit, Marker, Path, Series, Tone } from '../../plot/plot-model';
 
 export type Point = [number, number];
 
@@ -12,6 +12,8 @@ export interface Figure {
   series: Series[];
   limits?: Limit[];
   markers?: Marker[];
+  paths?: Path[];
+  pathsOver?: string;
   caption: string;
 }
 

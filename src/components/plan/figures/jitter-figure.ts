@@ -38,7 +38,12 @@ function ceiling({ stages, best }: Budget, limit: number): number {
 function curves({ sweep }: Budget): Series[] {
   const over = (values: readonly (number | null)[]) => pointsOf(sweep.noiseBandwidth, values);
   const parts: Series[] = [
-    { label: 'thermal', tone: 'soft', thin: true, points: over(sweep.thermal) },
+    {
+      label: patterned(sweep) ? 'noise and pattern' : 'noise',
+      tone: 'soft',
+      thin: true,
+      points: over(detectorJitter(sweep)),
+    },
     { label: 'oscillator', tone: 'soft', thin: true, dash: true, points: over(sweep.oscillator) },
     { label: 'total', tone: 'ink', points: over(sweep.total) },
   ];
@@ -46,6 +51,12 @@ function curves({ sweep }: Budget): Series[] {
   // With one term alone the total is that term.
   return drawn.length > 2 ? drawn : drawn.slice(-1);
 }
+
+/** What the detector passes on: channel noise and the pattern of the data, as one rms. */
+const detectorJitter = ({ thermal, selfNoise }: Budget['sweep']): (number | null)[] =>
+  thermal.map((value, i) => (value === null ? null : Math.hypot(value, selfNoise[i] ?? 0)));
+
+const patterned = ({ selfNoise }: Budget['sweep']): boolean => selfNoise.some((value) => (value ?? 0) > 0);
 
 const marks = (budget: Budget, asked: readonly (number | null)[]): Marker[] =>
   budget.stages.flatMap(({ stage, total }, index): Marker[] => {

@@ -1,7 +1,7 @@
 import type { LoopDesign, StageDesign } from '../../../../shared/model/design';
 import { numberText } from '../../../../shared/quantities/format';
 import { toneOf, type Figure, type Point } from './figure';
-import type { Marker, Series } from '../../plot/plot-model';
+import type { Marker, Path, Series } from '../../plot/plot-model';
 
 type Pole = StageDesign['poles'][number];
 
@@ -17,14 +17,27 @@ export function poleFigure({ stages }: LoopDesign): Figure {
   const x: [number, number] = [1 - 1.35 * reach, 1 + 0.3 * reach];
   const y: [number, number] = [-1.2 * reach, 1.2 * reach];
   return {
-    title: 'Closed-loop poles near z = 1',
+    title: 'Closed-loop poles near z = 1, root locus over the gain',
     file: 'poles',
     x: { label: 'Re z', domain: x },
     y: { label: 'Im z', domain: y },
     series: circle(y),
+    paths: locus(stages.at(-1)!),
+    pathsOver: 'gain over this one',
     markers: stages.flatMap(({ name }, index) => crosses(near[index]!, name, toneOf(index, stages.length))),
     caption: captionOf(stages, near),
   };
+}
+
+/** How the poles of the last stage move while its gain changes: one line a branch. */
+function locus({ rootLocus: { ratio, poles } }: StageDesign): Path[] {
+  const branches = poles[0]?.length ?? 0;
+  return Array.from({ length: branches }, (_, branch) => ({
+    label: `branch ${branch + 1}`,
+    tone: 'soft' as const,
+    points: poles.map((row): Point => [real(row[branch]!), imaginary(row[branch]!)]),
+    along: ratio,
+  }));
 }
 
 /** The poles that the loop has without its delay: as many as its order, the nearest to z = 1. */
@@ -63,5 +76,14 @@ function captionOf(stages: readonly StageDesign[], near: readonly Pole[][]): str
   const delay = rest > 0 ? `; ${rest} more of each stage, nearer 0, come from the delay` : '';
   return outside > 0
     ? `${outside} of ${all.length} poles lie on or outside the circle: the loop is unstable.`
-    : `All poles lie inside the circle, the largest magnitude is ${largest}${delay}.`;
+    : `All poles lie inside the circle, the largest magnitude is ${largest}${delay}.${ends(stages.at(-1)!)}`;
+}
+
+/** What the root locus of the last stage says. */
+function ends({ name, rootLocus: { critical, ratio } }: StageDesign): string {
+  const up = critical.find((value) => value > 1);
+  if (ratio.length === 0) return '';
+  return up === undefined
+    ? ` Soft lines: ${name} while its gain changes; no gain makes it unstable.`
+    : ` Soft lines: ${name} while its gain changes; at ${numberText(up, { significant: 3 })} times its gain a pole reaches the circle.`;
 }

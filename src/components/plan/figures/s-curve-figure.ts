@@ -22,9 +22,19 @@ export function sCurveFigure({ detector }: LoopDesign, kind: LoopKind, esN0Db: n
     },
     y: { label: 'error' },
     series: [...curves(detector, scale, esN0Db), slope(detector, scale)],
+    markers: falseNulls(detector).map(({ x }) => ({
+      x: x * scale,
+      y: 0,
+      tone: 'ink',
+      hollow: true,
+      label: 'false null',
+    })),
     caption: captionOf(detector, kind, scale),
   };
 }
+
+/** Where the loop can settle although it is not in lock. */
+const falseNulls = ({ nulls }: Detector) => nulls.filter(({ stable, lock }) => stable && !lock);
 
 function curves({ curve, variance, gain, gainWithoutNoise }: Detector, scale: number, esN0Db: number): Series[] {
   const x = curve.x.map((at) => at * scale);
@@ -64,5 +74,9 @@ function captionOf(detector: Detector, kind: LoopKind, scale: number): string {
     kind === 'carrier' ? `${numberText(period * scale, { significant: 4 })}°` : `${numberText(period)} symbol`;
   const change =
     before === after ? `The slope at lock is ${after}` : `Noise takes the slope from ${before} to ${after}`;
-  return `${change}; stable nulls every ${every}.${variance === null ? '' : ' The band is ±1σ of one update.'}`;
+  const wrong = falseNulls(detector).map(
+    ({ x }) => `${numberText(x * scale, { significant: 3 })}${kind === 'carrier' ? '°' : ' symbol'}`,
+  );
+  const trap = wrong.length ? ` The loop can also settle at ${wrong.join(' and ')}, out of lock.` : '';
+  return `${change}; lock every ${every}.${trap}${variance === null ? '' : ' The band is ±1σ of one update.'}`;
 }

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { gainGroups, widthBehindPoint, type GainCell, type GainRow } from '../../../../src/components/plan/gain-rows';
+import { gainGroups } from '../../../../src/components/plan/gain-rows';
+import { widthBehindPoint, type GainCell, type GainRow } from '../../../../src/components/plan/group-rows';
 import { design } from '../../support/plan';
 
 const carrier = design().carrier!;
@@ -34,12 +35,12 @@ describe('gainGroups', () => {
     expect(values('What the loop does, delay included', 'Stable up to delay')[0]).toBe(38);
   });
 
-  // QPSK: ambiguous from Rs/8 on, false locks every Rs/4: 3.4375 and 6.875 MHz at 27.5 MBd. Word: 27.5 MHz/2^32 = 6.40 mHz.
-  it('puts what belongs to the whole loop under the last stage', () => {
-    expect(values('Detector and range', 'Unambiguous below')[1]).toBeCloseTo(3.4375, 9);
-    expect(values('Detector and range', 'False locks every')[1]).toBeCloseTo(6.875, 9);
-    expect(values('Detector and range', 'One LSB')[1]).toBeCloseTo(6.4, 2);
-    expect(rows('Detector and range').every(({ cells }) => cells[0] === null)).toBe(true);
+  // Published (F. Gardner, Phaselock Techniques): ζ goes with the root of the gain, so ±1 dB of amplitude is 10^(±1/40).
+  it('shows the loop at both ends of the gain control', () => {
+    const title = 'With the amplitude 1 dB low and high';
+    const [, low] = values(title, 'Damping ζ, low');
+    const [, high] = values(title, 'Damping ζ, high');
+    expect(Math.abs(high! / low! / 10 ** (2 / 40) - 1)).toBeLessThan(0.01);
   });
 
   it('leaves out what a loop of this order does not have', () => {
