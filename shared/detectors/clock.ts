@@ -7,6 +7,7 @@ import type { DetectorModel } from './detector';
 import { railsOf } from './rails';
 import { gardnerSlope, leastVariance, signCurve, signSlope } from './sign-timing';
 import { earlyLateOffset, timingCovariance } from './timing-covariance';
+import type { SignDetector } from './sign-timing';
 import type { TimingSignal } from './timing-covariance';
 
 export type { ClockSignal } from './clock-signal';
@@ -19,12 +20,15 @@ interface Timing {
   signal: ClockSignal;
 }
 
-const keyOf = ({ detector, signal }: Timing): string => {
-  const { modulation, ringRatios, rollOff, amplitude, esN0 } = signal;
-  return JSON.stringify([detector, modulation, ringRatios, rollOff, amplitude, esN0]);
-};
+function cleanKeyOf({ detector, signal: { modulation, ringRatios, rollOff } }: Timing): string {
+  return JSON.stringify([detector, modulation, ringRatios, rollOff]);
+}
 
-const models = boundedMemo(modelOf, keyOf, 32);
+const models = boundedMemo(
+  modelOf,
+  (timing) => `${cleanKeyOf(timing)} ${timing.signal.amplitude} ${timing.signal.esN0}`,
+  32,
+);
 
 /**
  * The timing detector of a clock loop at its operating point, both rails added; x is how early the strobe comes,
@@ -38,20 +42,35 @@ export function clockDetector(detector: TimingDetectorName, signal: ClockSignal)
 }
 
 function modelOf({ detector, signal }: Timing): DetectorModel {
-  const { amplitude, esN0, rollOff } = signal;
-  const clean = { rails: railsOf(signal.modulation, signal.ringRatios), rollOff, variance: 0 };
-  const noisy = { ...clean, variance: 1 / (2 * esN0) };
+  const { amplitude, esN0 } = signal;
+  const clean = cleanTiming({ detector, signal });
+  const noisy = { ...clean.timing, variance: 1 / (2 * esN0) };
   const squared = detector === 'gardner' || detector === 'early-late';
   const scale = squared ? amplitude ** 2 : amplitude;
   const powers = (values: readonly number[]) => values.map((value) => scale ** 2 * value);
   return {
-    ...(squared ? sine(detector, rollOff, scale) : signDetector(detector, { clean, noisy, scale, signal })),
+    ...(squared ? sine(detector, signal.rollOff, scale) : signDetector(detector, { clean, noisy, scale, signal })),
     period: 1,
     covariance: powers(timingCovariance(detector, noisy)),
-    selfCovariance: powers(timingCovariance(detector, clean)),
+    selfCovariance: powers(clean.covariance),
     amplitudeExponent: squared ? 2 : 1,
   };
 }
+
+/** What is left without noise, at unit amplitude. */
+interface CleanTiming {
+  timing: TimingSignal;
+  covariance: readonly number[];
+}
+
+const cleanTiming = boundedMemo(
+  ({ detector, signal: { modulation, ringRatios, rollOff } }: Timing): CleanTiming => {
+    const timing = { rails: railsOf(modulation, ringRatios), rollOff, variance: 0 };
+    return { timing, covariance: timingCovariance(detector, timing) };
+  },
+  cleanKeyOf,
+  32,
+);
 
 type Curve = Pick<DetectorModel, 'gain' | 'gainWithoutNoise' | 'noisy' | 'noiseless'>;
 
@@ -70,7 +89,7 @@ function sine(detector: 'gardner' | 'early-late', rollOff: number, scale: number
 }
 
 interface Signs {
-  clean: TimingSignal;
+  clean: CleanTiming;
   noisy: TimingSignal;
   scale: number;
   signal: ClockSignal;
@@ -79,15 +98,15 @@ interface Signs {
 /** Slope, over that without noise, below which decisions no longer tell early from late. */
 const leastShare = 0.01;
 
-function signDetector(detector: 'zero-crossing' | 'mueller-muller', { clean, noisy, scale, signal }: Signs): Curve {
-  const [slope, without] = [signSlope(detector, noisy), signSlope(detector, clean)];
+function signDetector(detector: SignDetector, { clean, noisy, scale, signal }: Signs): Curve {
+  const [slope, without] = [signSlope(detector, noisy), signSlope(detector, clean.timing)];
   if (!(slope > leastShare * without)) {
     throw new ParameterError(
       '/signal/esN0Db',
       `at this Es/N0 the signs of ${signal.modulation} leave ${detector} no slope; take gardner`,
     );
   }
-  const cleanCurve = () => cleanCurves({ detector, timing: clean, signal });
+  const cleanCurve = () => cleanCurves({ detector, signal });
   const curve = noisy.variance > leastVariance ? signCurve(detector, noisy) : cleanCurve();
   return {
     gain: scale * slope,
@@ -97,11 +116,10 @@ function signDetector(detector: 'zero-crossing' | 'mueller-muller', { clean, noi
   };
 }
 
-/** Curves without noise, which no Es/N0 changes. */
+/** Curves without noise, which no Es/N0 changes; they take the longest. */
 const cleanCurves = boundedMemo(
-  ({ detector, timing }: { detector: 'zero-crossing' | 'mueller-muller'; timing: TimingSignal; signal: ClockSignal }) =>
-    signCurve(detector, timing),
-  ({ detector, signal: { modulation, ringRatios, rollOff } }) =>
-    JSON.stringify([detector, modulation, ringRatios, rollOff]),
+  ({ detector, signal }: { detector: SignDetector; signal: ClockSignal }) =>
+    signCurve(detector, cleanTiming({ detector, signal }).timing),
+  cleanKeyOf,
   32,
 );

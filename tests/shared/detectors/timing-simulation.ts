@@ -42,6 +42,7 @@ export function received({
   esN0,
   symbols,
   seed,
+  stride = 2,
 }: {
   modulation: string;
   rollOff: number;
@@ -49,6 +50,8 @@ export function received({
   esN0: number;
   symbols: number;
   seed: number;
+  /** Eighths of a symbol between the values that are worked out; the others stay 0. */
+  stride?: 1 | 2;
 }): Received {
   const { uniform, normal } = random(seed);
   const points = constellation(modulation.toLowerCase(), modulation === '16APSK' ? [2.85] : []);
@@ -59,7 +62,7 @@ export function received({
     const deviation = Math.sqrt(rate / (2 * esN0));
     for (let i = 0; i < air.length; i += 1) air[i] = deviation === 0 ? 0 : deviation * normal();
     sent.forEach((point, k) => addPulse(air, pulse, k * rate, point[which]));
-    return filtered(air, pulse);
+    return filtered(air, pulse, stride);
   };
   return { symbols, rails: [rail(0), rail(1)] };
 }
@@ -71,9 +74,9 @@ function addPulse(air: Float64Array, pulse: Float64Array, at: number, scale: num
   }
 }
 
-function filtered(air: Float64Array, pulse: Float64Array): Float64Array {
+function filtered(air: Float64Array, pulse: Float64Array, stride: number): Float64Array {
   const out = new Float64Array(air.length);
-  for (let n = 0; n < air.length; n += 2) {
+  for (let n = 0; n < air.length; n += stride) {
     let sum = 0;
     for (let i = 0; i < pulse.length; i += 1) sum += pulse[i]! * (air[n + i - reach * rate] ?? 0);
     out[n] = sum / rate;
