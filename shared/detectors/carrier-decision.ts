@@ -1,9 +1,9 @@
 import { ParameterError } from '../parameter-error';
 import { railCurve, railSlope, railVariance } from './carrier-decision-rails';
 import { noiselessCurve, regionCurve, regionSlope, regionVariance } from './carrier-decision-regions';
-import { decisionRegions, stretchedRegions } from './decision-regions';
+import { regionsOf, stretchedRegions } from './decision-regions';
 import type { DetectorModel } from './detector';
-import { distinctPoints, largestMagnitude, pointsOf, rotationalSymmetry } from './modulations';
+import { distinctPoints, largestMagnitude, rotationalSymmetry } from './modulations';
 import type { Modulation } from './modulations';
 import { shortened } from './short-curve';
 import { scaledModel } from './carrier-signal';
@@ -72,8 +72,8 @@ function decisionOf(modulation: Modulation, deviation: number, ringRatios: Carri
       slope: (stretch) => railSlope({ ...rail, stretch }),
     };
   }
-  const decided = pointsOf(modulation, ringRatios);
-  const regions = decisionRegions(decided);
+  const regions = regionsOf(modulation, ringRatios);
+  const decided = regions.points;
   const parts = { regions, decided, sent: distinctPoints(modulation, ringRatios), deviation };
   return {
     curve: (x) => regionCurve(parts, x),

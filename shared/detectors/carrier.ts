@@ -8,11 +8,14 @@ import { powerLaw } from './carrier-power-law';
 import { signBpsk, signQpsk } from './carrier-sign';
 import type { CarrierSignal, MakeCarrierModel } from './carrier-signal';
 import type { DetectorModel } from './detector';
+import { latest } from './latest';
 import type { Modulation } from './modulations';
 
 export type { CarrierSignal } from './carrier-signal';
 
 type Detector = CompleteCarrier['detector'];
+
+const kept = latest<DetectorModel>(16);
 
 /** Every pair that makes sense. The first detector of a modulation is the one to recommend. */
 const models: Record<Modulation, Partial<Record<Detector, MakeCarrierModel>>> = {
@@ -55,16 +58,4 @@ function reasonAgainst(detector: Detector, modulation: Modulation): string {
   }
   if (detector === 'sign') return `sign tells the rails apart by sign alone, too little for ${modulation}`;
   return `the fourth powers of ${modulation} cancel but for its innermost ring`;
-}
-
-const keptResults = 16;
-const results = new Map<string, DetectorModel>();
-
-/** The result that a key stands for, the latest used kept. */
-function kept(key: string, make: () => DetectorModel): DetectorModel {
-  const model = results.get(key) ?? make();
-  results.delete(key);
-  results.set(key, model);
-  if (results.size > keptResults) results.delete(results.keys().next().value as string);
-  return model;
 }

@@ -1,4 +1,7 @@
 import type { Point } from '../fixed-point/constellation';
+import { latest } from './latest';
+import { pointsOf } from './modulations';
+import type { Modulation } from './modulations';
 
 /**
  * The borders between the regions in which each point of a list is the nearest, as columns: one entry a border. It is
@@ -28,7 +31,17 @@ interface Border {
 /** Borders shorter than this are corners in which more than three regions meet. */
 const shortest = 1e-9;
 
-export function decisionRegions(points: readonly Point[]): DecisionRegions {
+const kept = latest<DecisionRegions>(8);
+
+/**
+ * Regions of a modulation.
+ *
+ * @throws {ParameterError} pointing at the ring ratios when they do not fit
+ */
+export const regionsOf = (modulation: Modulation, ringRatios?: readonly number[]): DecisionRegions =>
+  kept(`${modulation} ${ringRatios?.join() ?? ''}`, () => decisionRegions(pointsOf(modulation, ringRatios)));
+
+function decisionRegions(points: readonly Point[]): DecisionRegions {
   const pairs = points.flatMap((_, near) => points.slice(near + 1).map((_each, k) => [near, near + 1 + k] as const));
   const borders = pairs
     .map(([near, far]) => borderBetween(points, near, far))

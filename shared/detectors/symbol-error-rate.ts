@@ -1,9 +1,9 @@
 import type { Point } from '../fixed-point/constellation';
 import { tail } from '../math/gaussian-tail';
 import { hidden } from './decided-mean';
-import { decisionRegions, nearestIndex } from './decision-regions';
+import { nearestIndex, regionsOf } from './decision-regions';
 import type { DecisionRegions } from './decision-regions';
-import { distinctPoints, pointsOf } from './modulations';
+import { distinctPoints } from './modulations';
 import type { Modulation } from './modulations';
 import { interference, tapAt } from './offset-interference';
 
@@ -77,7 +77,7 @@ function railErrorRate(side: number): ErrorRate {
 
 /** Any points: what the borders round each one's region let out, by the theorem of the mean decided point. */
 function regionErrorRate(modulation: Modulation, ringRatios: ErrorRateSignal['ringRatios']): ErrorRate {
-  const regions = decisionRegions(pointsOf(modulation, ringRatios));
+  const regions = regionsOf(modulation, ringRatios);
   const sent = distinctPoints(modulation, ringRatios).map(([i, q]) =>
     regionOf(regions, nearestIndex(regions.points, i, q)),
   );

@@ -27,11 +27,11 @@ export function owensT(h: number, a: number): number {
   return (near + far) / 2 - near * far - tailBetween(a * h, 0, 1 / a);
 }
 
-/** 1/(2π) ∫ exp(−h²(1 + x²)/2)/(1 + x²) dx between two bounds of −1 to 1. */
+/** 1/(2π) ∫ exp(−h²(1 + x²)/2)/(1 + x²) dx by quadrature, between bounds that are near against the poles at ±j. */
 function tailBetween(h: number, from: number, to: number): number {
   const end = from >= 0 && h * to > reach ? Math.min(to, Math.sqrt(from * from + (reach / h) ** 2)) : to;
   const half = (end - from) / 2;
-  const { nodes, weights } = half < 0.35 && h * half < 1 ? coarse : fine;
+  const { nodes, weights } = half * half < 0.12 * poleSquare(from, to) && h * half < 1 ? coarse : fine;
   const middle = from + half;
   const square = -0.5 * h * h;
   let sum = 0;
@@ -43,12 +43,16 @@ function tailBetween(h: number, from: number, to: number): number {
   return perTurn * half * sum;
 }
 
+/** Square of the distance from a range of x to ±j. */
+const poleSquare = (from: number, to: number): number => 1 + (from > 0 ? from * from : to < 0 ? to * to : 0);
+
 /**
  * The same integral over x from `from` to `to`, either of them of any sign or infinite: the share of the circle that a
  * straight edge at distance h hides, weighted by the Gaussian beyond it.
  */
 export function edgeTail(h: number, from: number, to: number): number {
   if (from < 0 && to <= 0) return edgeTail(h, -to, -from);
-  if (to <= 1 && from >= -1 && (from >= 0 || h < 3)) return tailBetween(h, from, to);
+  const half = (to - from) / 2;
+  if (half * half <= 2.25 * poleSquare(from, to) && h * half <= 3) return tailBetween(h, from, to);
   return from < 0 ? owensT(h, -from) + owensT(h, to) : owensT(h, to) - owensT(h, from);
 }

@@ -130,6 +130,15 @@ describe('carrierDetector', () => {
     expect(make).toThrow(expect.objectContaining({ parameter: '/carrier/detector', message }));
   });
 
+  it('keeps what it has worked out for the same signal, whatever else a plan says', () => {
+    const model = carrierDetector('decision', signalOf('16APSK', 14));
+    expect(carrierDetector('decision', { ...signalOf('16APSK', 14), rollOff: 0.2 })).toBe(model);
+    expect(carrierDetector('decision', signalOf('16APSK', 14.1))).not.toBe(model);
+    expect(carrierDetector('decision', { ...signalOf('16APSK', 14), ringRatios: [2.6] })).not.toBe(model);
+    const offset = carrierDetector('sign', signalOf('OQPSK', 14));
+    expect(carrierDetector('sign', { ...signalOf('OQPSK', 14), rollOff: 0.2 })).not.toBe(offset);
+  });
+
   it('refuses decisions that leave no slope', () => {
     const make = (): unknown => carrierDetector('decision', signalOf('32APSK', -5));
     expect(make).toThrow(expect.objectContaining({ parameter: '/signal/esN0Db' }));
