@@ -1,6 +1,7 @@
 import type { Design } from '../../shared/model/design';
 import type { Plan } from '../../shared/model/plan';
 import { api } from './client';
+import { completeDesign } from './older-designs';
 import { everyPage } from './pages';
 import type { DraftPlan, RevisionSummary, TargetName } from './plans';
 import type { FileEntry } from './releases';
@@ -34,7 +35,11 @@ export interface StalePlan {
 export const listRevisions = (planId: number): Promise<RevisionSummary[]> =>
   everyPage<RevisionSummary>(`/plans/${planId}/revisions`);
 
-export const getRevision = (id: number): Promise<Revision> => api.get<Revision>(`/revisions/${id}`);
+/** A revision whole; what its engine did not work out stands in its design as null or empty. */
+export async function getRevision(id: number): Promise<Revision> {
+  const revision = await api.get<Revision>(`/revisions/${id}`);
+  return { ...revision, design: completeDesign(revision.design) };
+}
 
 /**
  * Saves a plan as its next revision.

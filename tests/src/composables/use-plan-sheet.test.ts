@@ -5,7 +5,7 @@ import { withValue } from '../../../shared/plan/pointer';
 import type { PlanSheet } from '../../../src/api/plans';
 import { createDraft, type DraftSession } from '../../../src/composables/use-draft';
 import { usePlanSheet, type PlanSheetSession } from '../../../src/composables/use-plan-sheet';
-import { plan } from '../support/plan';
+import { design, plan } from '../support/plan';
 
 let draft: DraftSession;
 let session: PlanSheetSession;
@@ -15,6 +15,7 @@ const asked = vi.fn();
 
 const json = (body: unknown, status = 200) => new Response(JSON.stringify(body), { status });
 const revision = (number: number) => ({ id: 100 + number, number, by: { id: 1, name: 'Ines Maro' }, note: '' });
+const worked = design();
 const old = withValue(plan(), '/carrier/delay', 1);
 const stored = (over: Partial<PlanSheet> = {}) => ({
   ...{ id: 7, name: 'Transponder 17', version: 3, description: plan(), head: revision(2), draft: null },
@@ -47,8 +48,8 @@ beforeEach(() => {
   answers = {
     'GET /plans/7': () => json(stored()),
     'GET /plans/7/revisions': () => json({ items: [revision(2), revision(1)], next: null }),
-    'GET /revisions/101': () => json({ ...revision(1), description: old }),
-    'GET /revisions/102': () => json({ ...revision(2), description: plan() }),
+    'GET /revisions/101': () => json({ ...revision(1), description: old, design: worked }),
+    'GET /revisions/102': () => json({ ...revision(2), description: plan(), design: worked }),
   };
   vi.stubGlobal('fetch', (path: string, init: RequestInit) => {
     const name = `${init.method} ${path.replace('/api/v1', '').replace(/\?.*/, '')}`;
@@ -106,7 +107,7 @@ describe('usePlanSheet', () => {
     expect(draft.value('/carrier/delay')).toBe(5);
     expect(session.divergence.value).toMatchObject({ head: { number: 3 }, version: 4, theirs, base: plan() });
 
-    answers['GET /revisions/103'] = () => json({ ...revision(3), description: theirs });
+    answers['GET /revisions/103'] = () => json({ ...revision(3), description: theirs, design: worked });
     await session.rebase(withValue(theirs, '/carrier/delay', 5));
     expect(draft.changes.value.map(({ pointer }) => pointer)).toEqual(['/carrier/delay']);
     expect([draft.baseName.value, session.sheet.value?.version, session.divergence.value]).toEqual(['r3', 4, null]);
