@@ -17,6 +17,8 @@ export interface FieldOfQuantity {
   /** The field holds both signs at once (±): the value is the magnitude. */
   symmetric?: boolean | undefined;
   integer?: boolean | undefined;
+  /** Fewest digits behind the point in what is said to be understood. */
+  least?: number | undefined;
 }
 
 export type Reading =
@@ -75,6 +77,8 @@ interface Converted {
   value: number;
   /** Set when a reference was used: the sentence then names it. */
   by?: Reference | undefined;
+  /** Digits worth saying of a value that a conversion leaves with many; all of it is held. */
+  significant?: number;
 }
 
 type Known = Exclude<TypedUnit, { kind: 'doubt' | 'unknown' }>;
@@ -84,30 +88,35 @@ function convert(digits: string, power: number, typed: Known, field: FieldOfQuan
   if (typed.kind === 'prefix') return { value: shift(digits, power + typed.exponent + own.bare - own.held) };
   const base = shift(digits, power + typed.exponent) * typed.factor;
   if (typed.dimension === own.dimension) {
-    return { value: typed.factor === 1 ? shift(digits, power + typed.exponent - own.held) : base };
+    if (typed.factor !== 1) return { value: base, significant: 5 };
+    return { value: shift(digits, power + typed.exponent - own.held) };
   }
   return convertByReference(base, typed.dimension, field);
 }
 
 function convertByReference(base: number, typed: Dimension, field: FieldOfQuantity): Converted | string {
   const { dimension, held } = fieldUnits[field.unit];
-  const takes = `is a ${typed}; this field takes ${field.unit === '' ? 'a plain number' : field.unit}`;
+  const takes = `is ${typed === 'angle' ? 'an' : 'a'} ${typed}; this field takes ${field.unit === '' ? 'a plain number' : field.unit}`;
   const { reference } = field;
   if (!reference || !(reference.value > 0)) return takes;
   const rateLike: readonly Dimension[] = ['frequency', 'symbol rate'];
-  if (dimension === 'ratio' && rateLike.includes(typed)) {
-    return { value: (base / reference.value) * 10 ** -held, by: reference };
+  // A baud is a share of a symbol rate, but neither of a carrier nor a bandwidth.
+  const share = typed === 'frequency' || (typed === 'symbol rate' && reference.unit === 'Bd' && field.unit === 'ppm');
+  if (dimension === 'ratio' && share) {
+    return { value: (base / reference.value) * 10 ** -held, by: reference, significant: 5 };
   }
-  if (rateLike.includes(dimension) && typed === 'ratio') return { value: base * reference.value, by: reference };
-  if (dimension === 'number of symbols' && typed === 'time') return { value: base * reference.value, by: reference };
+  if (rateLike.includes(dimension) && typed === 'ratio')
+    return { value: base * reference.value, by: reference, significant: 5 };
+  if (dimension === 'number of symbols' && typed === 'time')
+    return { value: base * reference.value, by: reference, significant: 5 };
   return takes;
 }
 
-function understood({ value, by }: Converted, field: FieldOfQuantity): Reading {
+function understood({ value, by, significant }: Converted, field: FieldOfQuantity): Reading {
   if (!Number.isFinite(value)) return refused('That number is out of every range');
   if (field.integer && !Number.isInteger(value)) return refused('This field takes a whole number');
   const clean = value === 0 ? 0 : value;
-  const text = quantityText(clean, { ...field, ...(by && { significant: 5 }) });
+  const text = quantityText(clean, { unit: field.unit, symmetric: field.symmetric, least: field.least, significant });
   return { kind: 'value', value: clean, text: by ? `${text} of ${quantityText(by.value, { unit: by.unit })}` : text };
 }
 

@@ -93,6 +93,8 @@ const spellings: Readonly<Record<string, Spelling>> = {
   dbc: { dimension: 'noise density', exponent: 0 },
   '°': { dimension: 'angle', exponent: 0 },
   deg: { dimension: 'angle', exponent: 0 },
+  degree: { dimension: 'angle', exponent: 0 },
+  degrees: { dimension: 'angle', exponent: 0 },
   '° rms': { dimension: 'angle', exponent: 0 },
   'deg rms': { dimension: 'angle', exponent: 0 },
   rad: { dimension: 'angle', exponent: 0, factor: 180 / Math.PI, prefixed: true },

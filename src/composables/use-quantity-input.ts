@@ -31,7 +31,8 @@ export function useQuantityInput(
 
   const checked = computed(() => {
     const unit = props.unit ?? '';
-    const field = { ...props, unit, shownExponent: shown.value.exponent };
+    const { reference, symmetric, integer, decimals: least } = props;
+    const field = { unit, reference, symmetric, integer, least, shownExponent: shown.value.exponent };
     return checkQuantity(text.value, field, { ...props, unit, label: label() });
   });
   const edited = computed(() => props.wasName !== undefined && props.modelValue !== props.was);

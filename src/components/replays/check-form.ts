@@ -67,7 +67,23 @@ export function readEsN0(text: string): number[] | undefined {
     .split(/[\s,;]+/)
     .filter(Boolean);
   const values = parts.map(Number);
+  if (esN0Doubt(text) !== undefined) return undefined;
   return values.length > 0 && values.every(Number.isFinite) ? values : undefined;
+}
+
+/**
+ * The question to ask of a list in which a comma may be the decimal point: “6,5” is 6.5, or 6 and 5.
+ * Space behind the comma, a point, or a third number leave one reading.
+ */
+export function esN0Doubt(text: string): string | undefined {
+  const pair = text
+    .replace(/dB/gi, ' ')
+    .split(/[\s;]+/)
+    .map((part) => /^([-\u2212]?\d+),(\d+)$/.exec(part))
+    .find((match) => match !== null);
+  if (!pair) return undefined;
+  const [typed, first, second] = pair;
+  return `${typed}: ${first}.${second}, or ${first} and ${second}? Type ${first}.${second} or ${first}, ${second}.`;
 }
 
 /** The check to send; undefined while something in the form cannot be read. */

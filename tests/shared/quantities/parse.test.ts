@@ -38,6 +38,11 @@ describe('parseQuantity', () => {
     ['+/-20', tolerance, 20],
     ['200 ppb', tolerance, 0.2],
     ['3°', { unit: '° rms' }, 3],
+    ['5 deg', { unit: '°' }, 5],
+    ['5 degrees', { unit: '°' }, 5],
+    ['550 Bd', { unit: 'ppm', reference: { value: 27.5e6, unit: 'Bd' } }, 20],
+    ['2.4 GHz', { unit: 'Hz' }, 2.4e9],
+    ['1.2 MBd', rate, 1.2e6],
     ['12 mHz', { unit: 'Hz' }, 0.012],
     ['300 µHz', { unit: 'Hz' }, 0.0003],
     ['300 \u03bcHz', { unit: 'Hz' }, 0.0003],
@@ -64,6 +69,12 @@ describe('parseQuantity', () => {
     expect(value('300 µs', { unit: 'symbols', reference: { value: 27.5e6, unit: 'Bd' } })).toBeCloseTo(8250, 6);
   });
 
+  // 1 rad = 180/π degrees = 57.295780 by the SI brochure.
+  it('holds all of a radian and says five digits of it', () => {
+    expect(value('0.1 rad', { unit: '°' })).toBeCloseTo(5.7295779513, 10);
+    expect(parseQuantity('0.1 rad', { unit: '°' })).toHaveProperty('text', '5.7296°');
+  });
+
   it.each(['1,234', '1,234 MBd', '999,000'])('asks which reading of %s is meant', (text) => {
     expect(parseQuantity(text, rate)).toMatchObject({ kind: 'doubt' });
   });
@@ -83,6 +94,8 @@ describe('parseQuantity', () => {
     ['±3', rate, /one value/],
     ['-20 ppm', tolerance, /magnitude/],
     ['2.5', { unit: 'bits', integer: true }, /whole number/],
+    ['20 kBd', tolerance, /kBd is a symbol rate; this field takes ppm/],
+    ['20 kBd', { unit: '', reference: { value: 27.5e6, unit: 'Bd' } }, /kBd is a symbol rate/],
     ['1e999', rate, /out of every range/],
   ])('refuses %s', (text, field, reason) => {
     const reading = parseQuantity(text, field);

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { examplePlan } from '../../../../src/components/plans/example-plan';
 import {
   checkOf,
+  esN0Doubt,
   formOf,
   missingTrials,
   readEsN0,
@@ -42,6 +43,21 @@ describe('readEsN0', () => {
     ['', undefined],
   ])('reads “%s”', (text, values) => {
     expect(readEsN0(text)).toEqual(values);
+  });
+});
+
+describe('esN0Doubt', () => {
+  it.each([
+    ['6,5', '6,5: 6.5, or 6 and 5? Type 6.5 or 6, 5.'],
+    ['10 −6,5 dB', '−6,5: −6.5, or −6 and 5? Type −6.5 or −6, 5.'],
+  ])('asks which reading of “%s” is meant', (text, question) => {
+    expect(esN0Doubt(text)).toBe(question);
+    expect(readEsN0(text)).toBeUndefined();
+  });
+
+  it.each(['6.5,10', '6, 5', '4,6,8', '6;5', '10'])('has one reading of “%s”', (text) => {
+    expect(esN0Doubt(text)).toBeUndefined();
+    expect(readEsN0(text)).toBeDefined();
   });
 });
 
