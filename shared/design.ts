@@ -23,13 +23,14 @@ export function workOut(plan: Plan): WorkedOut {
   const complete = completePlan(plan);
   requireConsistent(complete);
   const loops = loopsOf(complete);
+  const interaction = interactionOf(complete, loops);
   return {
     engine: engineVersion,
     plan: complete as unknown as Plan,
     ...loops,
-    findings: findingsOf(complete, loops),
+    findings: findingsOf(complete, { ...loops, interaction }),
     solutions: [],
-    interaction: interactionOf(complete, loops),
+    interaction,
   };
 }
 

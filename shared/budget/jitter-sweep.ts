@@ -25,8 +25,8 @@ export interface SweepInput {
 /** Neighbouring points of a sweep, bandwidths rising. */
 type Three = [SweepPoint, SweepPoint, SweepPoint];
 
-const sweepPoints = 25;
-const coarsePoints = 13;
+const sweepPoints = 33;
+const coarsePoints = 16;
 const rounds = 4;
 /** Bandwidths over which the least jitter is sought, cycles per update. */
 export const [narrowest, widest] = [1e-6, 0.2];

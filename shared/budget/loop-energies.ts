@@ -105,25 +105,24 @@ function padded({ high, low }: Polynomial, length: number): Polynomial {
 
 /** Takes every energy, one degree after the other; false when a pole is not inside the circle. */
 function integrate(a: Polynomial, forms: Form[]): boolean {
-  const perLead = divide(toDoubleDouble(1), at(a, 0));
+  const lead = at(a, 0);
   const reversed = fromTerms([], a.high.length, 0);
   for (let k = a.high.length - 1; k >= 0; k -= 1) {
     const top = at(a, 0);
     if (!(top.high > 0)) return false;
     reverseInto(reversed, a, k);
-    const perTop = divide(toDoubleDouble(1), top);
-    const perLast = multiply(perTop, perLead);
+    const last = multiply(top, lead);
     for (const form of forms) {
       const own = at(form.plain, k);
-      form.energy = add(form.energy, multiply(multiply(own, own), perLast));
+      form.energy = add(form.energy, divide(multiply(own, own), last));
       for (const each of form.weighted) {
         const other = at(each.polynomial, k);
-        each.energy = add(each.energy, multiply(multiply(own, other), perLast));
-        subtractProducts(each.polynomial, multiply(other, perTop), reversed, k);
+        each.energy = add(each.energy, divide(multiply(own, other), last));
+        subtractProducts(each.polynomial, divide(other, top), reversed, k);
       }
-      subtractProducts(form.plain, multiply(own, perTop), reversed, k);
+      subtractProducts(form.plain, divide(own, top), reversed, k);
     }
-    subtractProducts(a, multiply(at(a, k), perTop), reversed, k);
+    subtractProducts(a, divide(at(a, k), top), reversed, k);
   }
   return true;
 }

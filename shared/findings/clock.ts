@@ -6,6 +6,7 @@ import { finding, passed, remedyUnless, say } from './finding';
 import type { Severity } from './finding';
 import { numberOf, pointerOf } from './loop-view';
 import type { LoopView } from './loop-view';
+import { interpolatorFindings } from './interpolator';
 import { widerIntegrator } from './wider-integrator';
 
 /** Half of the slope at roll-off 0.2. */
@@ -13,7 +14,7 @@ const leastSlope = 0.3;
 
 /** What only a clock loop can get wrong. */
 export function clockFindings(view: LoopView): Finding[] {
-  return view.key === 'clock' ? [...ppmRange(view), slope(view)] : [];
+  return view.key === 'clock' ? [...ppmRange(view), ...slope(view), ...interpolatorFindings(view)] : [];
 }
 
 function ppmRange(view: LoopView): Finding[] {
@@ -53,24 +54,28 @@ const limitPpm = ({ loop }: LoopView): number | undefined =>
 const wordRangePpm = ({ design, plan }: LoopView): number =>
   largestErrorHeldPpm({ ...(design.words as ClockWords), integratorLimit: null }, plan.signal.samplesPerSymbol);
 
-function slope(view: LoopView): Finding {
+/** Of the Gardner detector; the slopes of detectors that decide stay. */
+function slope(view: LoopView): Finding[] {
+  if (view.design.detector.name !== 'gardner') return [];
   const { rollOff } = view.plan.signal;
   const value = gardnerSlope(rollOff);
   const severity: Severity = value < leastSlope ? 'caution' : 'pass';
-  return finding({
-    slug: 'clock.slope',
-    severity,
-    title: passed(severity, 'The timing detector has slope enough', 'The timing detector’s slope nearly vanishes'),
-    value,
-    limit: leastSlope,
-    sense: 'min',
-    unit: 'per symbol',
-    reason: `At roll-off ${say(rollOff)} (1.4) the Gardner detector has a slope of ${say(value)} per symbol at unit amplitude. Its own pattern noise does not fall with it.`,
-    ...remedyUnless(severity, () => ({
-      remedy: 'Take a wider roll-off, or a narrower clock loop.',
-      change: null,
-    })),
-    fields: ['/signal/rollOff', pointerOf(view, 'detector')],
-    source: 'F. Gardner 1986; the limit is common practice',
-  });
+  return [
+    finding({
+      slug: 'clock.slope',
+      severity,
+      title: passed(severity, 'The timing detector has slope enough', 'The timing detector’s slope nearly vanishes'),
+      value,
+      limit: leastSlope,
+      sense: 'min',
+      unit: 'per symbol',
+      reason: `At roll-off ${say(rollOff)} (1.4) the Gardner detector has a slope of ${say(value)} per symbol at unit amplitude. Its own pattern noise does not fall with it.`,
+      ...remedyUnless(severity, () => ({
+        remedy: 'Take a wider roll-off, or a narrower clock loop.',
+        change: null,
+      })),
+      fields: ['/signal/rollOff', pointerOf(view, 'detector')],
+      source: 'F. Gardner 1986; the limit is common practice',
+    }),
+  ];
 }

@@ -1,3 +1,4 @@
+import { bandwidthOverOmega } from '../loop/gains';
 import { stageLoop } from '../loop/stage-loop';
 import type { LinearLoop } from '../loop/linear-loop';
 import { ParameterError } from '../parameter-error';
@@ -44,4 +45,12 @@ export function loopAt({ key, index, stage, loop, plan }: StageView, value: numb
     if (error instanceof ParameterError) return null;
     throw error;
   }
+}
+
+/** BnT that a stage asks for, also where it asks for a natural frequency. */
+export function nominalBandwidth({ stage, result, loop, plan }: StageView): number {
+  if (stage.noiseBandwidth !== undefined) return stage.noiseBandwidth;
+  if (loop.method === 'exact') return result.noiseBandwidth.exact as number;
+  const perOmega = bandwidthOverOmega(loop.order, stage.damping ?? 1, loop.thirdOrder);
+  return (2 * Math.PI * (stage.naturalFrequencyHz as number) * perOmega) / plan.signal.symbolRateBd;
 }

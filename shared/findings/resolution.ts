@@ -6,12 +6,16 @@ import { finding, passed, remedyUnless, say, setTo } from './finding';
 import type { Remedy, Severity } from './finding';
 import { lastStage, numberOf, pointerOf, stageName } from './loop-view';
 import type { LoopView, StageView } from './loop-view';
+import { ncoFindings } from './nco-words';
 
 /** Share of the jitter limit that a standing error may take unnoticed. */
 const quietShare = 0.1;
 
+/** What small words leave of errors and frequencies. */
+export const resolutionFindings = (view: LoopView): Finding[] => [...deadBand(view), ...ncoFindings(view)];
+
 /** Errors so small that they leave the integrator of an order-2 loop where it is. */
-export function resolutionFindings(view: LoopView): Finding[] {
+function deadBand(view: LoopView): Finding[] {
   if (view.loop.order < 2) return [];
   const at = lastStage(view);
   const standing = standingError(view, reachAt(view, at));

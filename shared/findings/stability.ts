@@ -5,6 +5,7 @@ import type { Remedy, Severity } from './finding';
 import { bandwidthPointer, numberOf, pointerOf, stageAt, stageName, stageViews, worstStage } from './loop-view';
 import type { LoopView, StageView } from './loop-view';
 import { narrowerLoop } from './narrower';
+import { peakingFindings } from './peaking';
 import { finerWords } from './quantisation';
 
 /** Spare gain below which a loop is called close to its limit, dB. */
@@ -13,7 +14,7 @@ const leastGainMarginDb = 6;
 export function stabilityFindings(view: LoopView): Finding[] {
   const stable = closedLoop(view);
   if (stable.severity === 'fail') return [stable];
-  return [stable, ...phaseMargin(view), ...gainMargin(view)];
+  return [stable, ...phaseMargin(view), ...gainMargin(view), ...peakingFindings(view)];
 }
 
 function closedLoop(view: LoopView): Finding {

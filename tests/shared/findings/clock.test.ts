@@ -48,3 +48,42 @@ describe('clock.slope', () => {
     if (rollOff === 0.2) expect(finding.value).toBeCloseTo(0.62428, 5);
   });
 });
+
+describe('clock.interpolator', () => {
+  // Derived (spectral integral): 21.1 dB for linear and 31.4 dB for cubic at 2 samples per symbol, α = 0.35.
+  it.each([
+    ['cubic', 31.4, 10, 'pass'],
+    ['linear', 21.1, 10, 'fail'],
+    ['cubic', 31.4, 20, 'fail'],
+    ['cubic', 31.4, 18, 'caution'],
+  ])('%s, %f dB clean, beside %f dB is a %s', (interpolator, cleanDb, esN0Db, severity) => {
+    const finding = clockFinding('clock.interpolator', { signal: { esN0Db }, clock: { interpolator } });
+    expect(finding).toMatchObject({ severity, limit: 0.3, unit: 'dB' });
+    expect(finding.value! / (10 * Math.log10(1 + 10 ** ((esN0Db - cleanDb) / 10)))).toBeCloseTo(1, 1);
+  });
+
+  it('types the first finer interpolator that is clean enough', () => {
+    const parts = { clock: { interpolator: 'linear' } };
+    const finding = clockFinding('clock.interpolator', parts);
+    expect(finding.change).toEqual({
+      pointer: '/clock/interpolator',
+      value: 'parabolic',
+      label: 'Set 3.25 to parabolic',
+    });
+    expect(afterRemedy(finding, parts).severity).toBe('pass');
+  });
+
+  it('asks for more samples where none is', () => {
+    const finding = clockFinding('clock.interpolator', { signal: { esN0Db: 50 } });
+    expect(finding).toMatchObject({ severity: 'fail', change: null });
+    expect(finding.remedy).toContain('1.3');
+  });
+
+  // Sampled once a symbol, what lies beyond half the rate folds back, and no interpolator undoes it.
+  it('asks for two samples per symbol where the band folds', () => {
+    const parts = { signal: { samplesPerSymbol: 1 }, clock: { detector: 'mueller-muller' } };
+    const finding = clockFinding('clock.interpolator', parts);
+    expect(finding).toMatchObject({ severity: 'fail', change: null });
+    expect(finding.remedy).toContain('gardner or zero-crossing');
+  });
+});

@@ -73,3 +73,37 @@ describe(slug, () => {
     expect(findingsAbout(slug, { clock: undefined, carrier: { order: 1 } })).toEqual([]);
   });
 });
+
+describe('resolution.spur', () => {
+  // Published (H. Nicholas, H. Samueli 1987): the images of the first 2^P lines, 20·log10(2^P − 1) down.
+  it.each([
+    [12, 'pass'],
+    [4, 'caution'],
+  ])('with %i phase bits is a %s', (phaseBits, severity) => {
+    const parts = { carrier: { nco: { phaseBits } } };
+    const finding = carrierFinding('resolution.spur', parts);
+    expect(finding).toMatchObject({ severity, limit: -30, unit: 'dBc' });
+    expect(finding.value).toBeCloseTo(-20 * Math.log10(2 ** phaseBits - 1), 4);
+    if (severity === 'caution') expect(afterRemedy(finding, parts).severity).toBe('pass');
+  });
+});
+
+describe('resolution.frequency', () => {
+  it('passes 32 bits', () => {
+    expect(findingsAbout('resolution.frequency').map(({ severity }) => severity)).toEqual(['pass', 'pass']);
+  });
+
+  // By hand: one LSB of 12 bits is 360/4096°, and g1 = 300/11401 turns it into 3.34° of phase.
+  it('fails an NCO whose step is worth more than the jitter limit, and types one that is fine', () => {
+    const carrier = {
+      delay: 0,
+      stages: [{ name: 'track', noiseBandwidth: 0.01 }],
+      nco: { widthBits: 12, phaseBits: 12 },
+      arithmetic: { integratorBits: 24 },
+    };
+    const finding = carrierFinding('resolution.frequency', { carrier });
+    expect(finding).toMatchObject({ severity: 'fail', limit: 0.3, change: { value: 16, label: 'Set 2.8 to 16 bits' } });
+    expect(finding.value).toBeCloseTo((360 / 4096 / 300) * 11401, 6);
+    expect(afterRemedy(finding, { carrier }).severity).toBe('pass');
+  });
+});

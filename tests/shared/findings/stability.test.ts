@@ -77,3 +77,34 @@ describe('stability.gain-margin', () => {
     expect(afterRemedy(finding, parts).severity).toBe('pass');
   });
 });
+
+describe('stability.peaking', () => {
+  // Derived from |H|² of 2ζs + 1 over s² + 2ζs + 1 at BnT so small that the loop is the analog one: 2.10 dB at 1/√2,
+  // 5.65 dB at 0.3.
+  const analogPeakDb = (zeta: number): number => {
+    let peak = 0;
+    for (let x = 0.01; x < 3; x += 0.001) {
+      const d = (2 * zeta * x) ** 2;
+      peak = Math.max(peak, (1 + d) / ((1 - x * x) ** 2 + d));
+    }
+    return 10 * Math.log10(peak);
+  };
+
+  it.each([
+    [Math.SQRT1_2, 'pass'],
+    [0.3, 'caution'],
+  ])('with a damping factor of %f is a %s', (damping, severity) => {
+    const parts = { carrier: { delay: 0, stages: [{ name: 'track', damping, noiseBandwidth: 1e-4 }] } };
+    const finding = carrierFinding('stability.peaking', parts);
+    expect(finding).toMatchObject({ severity, limit: 4, unit: 'dB' });
+    expect(finding.value).toBeCloseTo(analogPeakDb(damping), 2);
+    if (severity === 'caution') expect(afterRemedy(finding, parts).severity).toBe('pass');
+  });
+
+  it('types a narrower loop where the delay makes the peak', () => {
+    const parts = { carrier: { delay: 20, stages: stages(0.01) } };
+    const finding = carrierFinding('stability.peaking', parts);
+    expect(finding).toMatchObject({ severity: 'caution', change: { pointer: '/carrier/stages/0/noiseBandwidth' } });
+    expect(afterRemedy(finding, parts).severity).toBe('pass');
+  });
+});
