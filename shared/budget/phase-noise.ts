@@ -12,6 +12,10 @@ const rule = gaussLegendre(6);
 /** Widest panel, over ln ω, and most change of ln(S_φ·f) in one. */
 const widestPanel = 0.8;
 const steepestPanel = 7;
+/** A table's 300 dB between two points are ten such changes; rounding makes more of them where offsets all but coincide. */
+const mostPanels = 32;
+/** Offsets nearer to one another, over ln ω, are one panel: a step so small would not move them. */
+const leastSpan = 1e-9;
 /** Most turn of z^(1+D) in a panel, radians. */
 const mostTurn = 5;
 
@@ -76,10 +80,11 @@ export function phaseNoiseGrid(
 /** Cuts the stretch between two points of the table into panels. */
 function panels(table: PhaseNoiseTable, loop: LinearLoop, [from, to]: [number, number], perHz: number) {
   const span = Math.log(to / from);
+  if (!(span > leastSpan)) return [[from, to] as [number, number]];
   const middle = phaseNoiseDensity(table, Math.sqrt(from * to) / perHz);
   const near = phaseNoiseDensity(table, (from * Math.exp(span / 4)) / perHz);
   const slope = Math.abs((4 * Math.log(middle / near)) / span + 1);
-  const width = Math.min(widestPanel, steepestPanel / Math.max(slope, 1e-9));
+  const width = Math.max(Math.min(widestPanel, steepestPanel / Math.max(slope, 1e-9)), span / mostPanels);
   const cuts = [from];
   for (let at = from; at < to;) {
     const turning = Math.log(1 + mostTurn / ((1 + loop.delay) * at));

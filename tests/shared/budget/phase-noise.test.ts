@@ -164,3 +164,23 @@ describe('oscillatorVariance', () => {
     expect(oscillatorVariance(loop, phaseNoiseGrid(broadcastMask, loop, 1e-3, 1e6))).toBeNull();
   });
 });
+
+describe('offsets that all but coincide', () => {
+  // By definition a table stays the table of its outer points where two inner ones move together.
+  it('are one step, not panels without end', () => {
+    const loop = nominal(0.01);
+    const flat = (step: number): [number, number][] => [
+      [1, -60],
+      [1e3, -90],
+      [1e3 * (1 + step), -95],
+      [1e6, -95],
+    ];
+    const variance = (step: number): number => {
+      const grid = phaseNoiseGrid(flat(step), loop, 1e-2, 1e6);
+      expect(grid.weights.length).toBeLessThan(2000);
+      return oscillatorVariance(loop, grid)!;
+    };
+    const wide = variance(1e-6);
+    for (const step of [1e-9, 1e-12, 3e-16]) expect(Math.abs(variance(step) / wide - 1)).toBeLessThan(1e-5);
+  });
+});
