@@ -28,6 +28,7 @@ describe('owensT', () => {
 describe('edgeTail', () => {
   // Derived: differences of scipy.special.owens_t, scipy 1.17.
   it.each([
+    [0.3, -4, 5, 0.37478198548102126],
     [0.5, -1.4, 1, 0.23277180152100252],
     [1, 2, 5, 0.0008594374788060688],
     [2, -3, -0.5, 0.002749987986023536],
