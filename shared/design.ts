@@ -7,6 +7,7 @@ import { engineVersion } from './engine';
 import { findingsOf } from './findings';
 import { completePlan } from './plan/complete';
 import type { CompletePlan } from './plan/complete';
+import { solutionsOf } from './solve';
 import { requireConsistent } from './plan/consistency';
 
 /** A design without its digest, which whoever stores it makes. */
@@ -29,7 +30,7 @@ export function workOut(plan: Plan): WorkedOut {
     plan: complete as unknown as Plan,
     ...loops,
     findings: findingsOf(complete, { ...loops, interaction }),
-    solutions: [],
+    solutions: solutionsOf(complete, loops),
     interaction,
   };
 }
