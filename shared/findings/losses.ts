@@ -1,5 +1,6 @@
 import type { Finding } from '../model/design';
 import { carrierDetector, carrierDetectorsFor } from '../detectors/carrier';
+import { ParameterError } from '../parameter-error';
 import { finding, passed, remedyUnless, say, setTo } from './finding';
 import type { Remedy, Severity } from './finding';
 import { bandwidthPointer, lastStage, numberOf, pointerOf } from './loop-view';
@@ -46,11 +47,16 @@ function quieterDetector(view: LoopView, present: number): Remedy {
   return { remedy: 'Raise 1.5, or work on known symbols where the waveform has them.', change: null };
 }
 
-/** Variance over slope of uncorrelated errors, against A²/(2γ) of known symbols. */
+/** Variance over slope of uncorrelated errors, against A²/(2γ) of known symbols; none that noise leaves no slope. */
 function lossOf({ plan: { signal } }: LoopView, name: Parameters<typeof carrierDetector>[0]): number {
   const esN0 = 10 ** (signal.esN0Db / 10);
-  const { covariance, gain } = carrierDetector(name, { ...signal, esN0 });
-  return covariance ? (2 * esN0 * (covariance[0] as number)) / gain ** 2 : Infinity;
+  try {
+    const { covariance, gain } = carrierDetector(name, { ...signal, esN0 });
+    return covariance ? (2 * esN0 * (covariance[0] as number)) / gain ** 2 : Infinity;
+  } catch (error) {
+    if (error instanceof ParameterError) return Infinity;
+    throw error;
+  }
 }
 
 function implementationLoss(view: LoopView): Finding[] {

@@ -24,6 +24,11 @@ describe('noise.squaring-loss', () => {
     expect(afterRemedy(finding, parts).severity).toBe('pass');
   });
 
+  it('names no detector where noise leaves the others no slope', () => {
+    const parts = { signal: { modulation: '8PSK', esN0Db: -10 }, carrier: { detector: 'power-law' } };
+    expect(carrierFinding('noise.squaring-loss', parts)).toMatchObject({ severity: 'caution', change: null });
+  });
+
   it('is a matter of phase detectors', () => {
     expect(findingsAbout('noise.squaring-loss', { carrier: undefined })).toEqual([]);
   });
