@@ -61,8 +61,9 @@ function phaseFromTiming({ modulation, rollOff }: CompletePlan['signal'], varian
  * add σ²·Σ g′(k)² to a noise of 1/γ.
  */
 function lossFromTiming({ rollOff, esN0Db }: CompletePlan['signal'], variance: number): number {
-  const left = Math.exp(-2 * Math.PI ** 2 * meanSquareBandwidth(rollOff) * variance);
-  return -20 * Math.log10(left) + 10 * Math.log10(1 + 10 ** (esN0Db / 10) * variance * interferencePower(rollOff));
+  // −20·log10 of e^−x, which would underflow for a loop that is far from locked.
+  const exponent = 2 * Math.PI ** 2 * meanSquareBandwidth(rollOff) * variance;
+  return (20 * exponent) / Math.LN10 + 10 * Math.log10(1 + 10 ** (esN0Db / 10) * variance * interferencePower(rollOff));
 }
 
 /** Mean cosine of a normal phase error: what a decided rail keeps of its slope. */
