@@ -8,6 +8,8 @@ export type PhaseNoiseTable = readonly (readonly [offsetHz: number, levelDbc: nu
 
 /** Where the integration starts, over the slowest loop: below it |1 − H|² falls by 40 dB a decade or more. */
 const below = 1e-3;
+/** No lower than this, radians per update: whatever a table says there, a loop of 1e-7 follows it. */
+const lowest = 1e-20;
 const rule = gaussLegendre(6);
 /** Widest panel, over ln ω, and most change of ln(S_φ·f) in one. */
 const widestPanel = 0.8;
@@ -34,7 +36,10 @@ export function phaseNoiseDensity(table: PhaseNoiseTable, frequencyHz: number): 
 function levelBetween(table: PhaseNoiseTable, frequencyHz: number): number {
   const above = table.findIndex(([offset]) => offset >= frequencyHz);
   const [from, to] = [table[above - 1], table[above]] as [[number, number], [number, number]];
-  return from[1] + ((to[1] - from[1]) * Math.log(frequencyHz / from[0])) / Math.log(to[0] / from[0]);
+  const [start, end] = [Math.log(from[0]), Math.log(to[0])];
+  // Offsets so close that their logarithms meet are a step.
+  const share = end > start ? Math.min(1, Math.max(0, (Math.log(frequencyHz) - start) / (end - start))) : 1;
+  return from[1] + (to[1] - from[1]) * share;
 }
 
 /** Phase noise laid out over frequency once, for loops of one order, delay and averaging and any gains. */
@@ -59,7 +64,7 @@ export function phaseNoiseGrid(
 ): PhaseNoiseGrid {
   const perHz = (2 * Math.PI) / updateRateHz;
   const offsets = table.map(([offsetHz]) => perHz * offsetHz);
-  const low = Math.min(slowestOmega, 1, offsets[0] as number) * below;
+  const low = Math.max(lowest, Math.min(slowestOmega, 1, offsets[0] as number) * below);
   const ends = [low, ...offsets.filter((offset) => offset > low && offset < Math.PI), Math.PI];
   const omega: number[] = [];
   const widths: number[] = [];
@@ -88,8 +93,10 @@ function panels(table: PhaseNoiseTable, loop: LinearLoop, [from, to]: [number, n
   const cuts = [from];
   for (let at = from; at < to;) {
     const turning = Math.log(1 + mostTurn / ((1 + loop.delay) * at));
-    at *= Math.exp(Math.min(width, turning));
-    cuts.push(at < to * (1 - 1e-9) ? at : to);
+    const next = at * Math.exp(Math.min(width, turning));
+    // Two offsets may lie so close together that no number is between them.
+    at = next > at && next < to * (1 - 1e-9) ? next : to;
+    cuts.push(at);
   }
   return cuts.slice(1).map((cut, i): [number, number] => [cuts[i] as number, cut]);
 }

@@ -159,6 +159,33 @@ describe('oscillatorVariance', () => {
     expect(Math.abs(variance / brute(broadcastMask, { ...gains, delay: 0 }, 20e6) - 1)).toBeLessThan(2e-3);
   });
 
+  // Offsets one rounding apart, and one at the foot of what a number can hold: the quadrature ends, and sees no more there
+  // than the table without them.
+  it.each<[string, [number, number][]]>([
+    [
+      'neighbours',
+      [
+        [1e4, -40],
+        [1e4 * (1 + 2 ** -52), -120],
+        [1e7, -120],
+      ],
+    ],
+    [
+      'the least number',
+      [
+        [5e-324, 50],
+        [1e4, -40],
+        [1e4 * (1 + 1e-13), -120],
+        [1e7, -120],
+      ],
+    ],
+  ])('takes a table of the strangest offsets: %s', (_name, table) => {
+    const loop = nominal(0.005);
+    const variance = oscillatorVariance(loop, phaseNoiseGrid(table, loop, 1e-6, 20e6)) as number;
+    expect(Number.isFinite(variance)).toBe(true);
+    expect(variance).toBeGreaterThan(0);
+  });
+
   it('has no finite value for order 1', () => {
     const loop = linearLoop({ gains: nominalGains(1, { damping: 1, theta: 0.01 }), delay: 0, averaged: 1 });
     expect(oscillatorVariance(loop, phaseNoiseGrid(broadcastMask, loop, 1e-3, 1e6))).toBeNull();
