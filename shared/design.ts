@@ -6,7 +6,8 @@ import { clockLoop } from './design/clock-loop';
 import { engineVersion } from './engine';
 import { findingsOf } from './findings';
 import { completePlan } from './plan/complete';
-import type { CompletePlan } from './plan/complete';
+import { boundedMemo } from './math/bounded-memo';
+import type { CompleteCarrier, CompleteClock, CompletePlan } from './plan/complete';
 import { solutionsOf } from './solve';
 import { requireConsistent } from './plan/consistency';
 
@@ -46,7 +47,26 @@ const interactionOf = (plan: CompletePlan, { carrier, clock }: Loops) =>
 
 function loopsOf(plan: CompletePlan): Loops {
   const loops: Loops = {};
-  if (plan.carrier) loops.carrier = carrierLoop(plan, plan.carrier);
-  if (plan.clock) loops.clock = clockLoop(plan, plan.clock);
+  if (plan.carrier) loops.carrier = keptCarrier({ plan, carrier: plan.carrier });
+  if (plan.clock) loops.clock = keptClock({ plan, clock: plan.clock });
   return loops;
 }
+
+/** Loops kept: while one loop is typed, the other stays as it is. Nobody may change what is kept. */
+const keptLoops = 8;
+
+const keptCarrier = boundedMemo(
+  ({ plan, carrier }: { plan: CompletePlan; carrier: CompleteCarrier }) => carrierLoop(plan, carrier),
+  ({ plan, carrier }) => keyOf(plan, carrier),
+  keptLoops,
+);
+
+const keptClock = boundedMemo(
+  ({ plan, clock }: { plan: CompletePlan; clock: CompleteClock }) => clockLoop(plan, clock),
+  ({ plan, clock }) => keyOf(plan, clock),
+  keptLoops,
+);
+
+/** Everything that a loop's design depends on. */
+const keyOf = ({ signal, environment, limits }: CompletePlan, loop: CompleteCarrier | CompleteClock): string =>
+  JSON.stringify([signal, environment, limits, loop]);

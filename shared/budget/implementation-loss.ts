@@ -16,6 +16,7 @@ export interface LossInput {
 const reach = 16;
 /** Widest and narrowest step of the mean, deviations. */
 const [widest, narrowest] = [0.75, 0.1];
+const negligible = 1e-8;
 /** Smallest error rate that is worth a loss. */
 const least = 1e-300;
 /** Es/N0 below which none is sought, dB. */
@@ -44,15 +45,15 @@ function meanErrorRate({ errorRate, esN0, variance, bias }: LossInput): number {
   const deviation = Math.sqrt(variance);
   // The rate of errors rises over an angle of about one deviation of the noise.
   const step = Math.max(narrowest, Math.min(widest, 1.2 / (deviation * Math.sqrt(2 * esN0))));
-  const count = Math.ceil(reach / step);
-  // A constellation that is its own mirror image errs alike at φ and −φ.
-  const symmetric = bias === 0;
-  let [sum, weights] = [0, 0];
-  for (let i = symmetric ? 0 : -count; i <= count; i += 1) {
-    const x = step * i;
-    const weight = Math.exp((-x * x) / 2) * (symmetric && i > 0 ? 2 : 1);
-    sum += weight * errorRate(esN0, bias + deviation * x);
-    weights += weight;
+  const at = (x: number): number => errorRate(esN0, bias + deviation * x);
+  let [sum, weights] = [at(0), 1];
+  for (let x = step; x < reach; x += step) {
+    const weight = Math.exp((-x * x) / 2);
+    // A constellation that is its own mirror image errs alike at φ and −φ.
+    sum += weight * (bias === 0 ? 2 * at(x) : at(x) + at(-x));
+    weights += 2 * weight;
+    // No rate is above 1, so that what is left cannot count any more.
+    if (weight < negligible * sum) break;
   }
   return sum / weights;
 }
@@ -75,7 +76,7 @@ function lossDb({ errorRate, esN0 }: LossInput, rate: number): number | null {
     const share = round % 3 === 2 ? 0.5 : highGap / (highGap - lowGap);
     const middle = high - share * (high - low);
     const middleGap = gap(middle);
-    if (Math.abs(middleGap) < 1e-10) return top - middle;
+    if (Math.abs(middleGap) < 1e-8) return top - middle;
     if (middleGap < 0) [high, highGap] = [middle, middleGap];
     else [low, lowGap] = [middle, middleGap];
   }

@@ -54,7 +54,7 @@ const drawn = (disturbances: JitterInput['disturbances']): JitterInput['disturba
   self: shortened(disturbances.self, drawnLags),
 });
 
-const drawnLags = 12;
+const drawnLags = 8;
 
 const termNames = ['thermal', 'selfNoise', 'oscillator', 'phaseQuantisation', 'wordQuantisation', 'drift'] as const;
 

@@ -1,10 +1,11 @@
 import type { BestBandwidth, JitterSweep } from '../model/design';
 import { logarithmicPoints } from '../loop/frequency-response';
-import { noiseBandwidth } from '../loop/noise-bandwidth';
+import { swiftNoiseBandwidth } from '../loop/swift-noise-bandwidth';
 import { jitterTerms } from './jitter';
 import type { Disturbances, JitterTerms } from './jitter';
 import { loopOfBandwidth } from './loop-family';
 import type { LoopFamily } from './loop-family';
+import { swiftLoopVariances } from './swift-loop-variances';
 
 /** One bandwidth of a sweep. */
 export interface SweepPoint {
@@ -25,8 +26,8 @@ export interface SweepInput {
 /** Neighbouring points of a sweep, bandwidths rising. */
 type Three = [SweepPoint, SweepPoint, SweepPoint];
 
-const sweepPoints = 33;
-const coarsePoints = 16;
+const sweepPoints = 25;
+const coarsePoints = 13;
 const rounds = 4;
 /** Bandwidths over which the least jitter is sought, cycles per update. */
 export const [narrowest, widest] = [1e-6, 0.2];
@@ -43,12 +44,12 @@ export function sweepAround(input: SweepInput): SweepPoint[] {
 function sweepPoint({ family, disturbances }: SweepInput, bandwidth: number): SweepPoint | null {
   const loop = loopOfBandwidth(family, bandwidth);
   if (!loop) return null;
-  const actual = family.method === 'exact' ? noiseBandwidth(loop) : bandwidth;
+  const actual = family.method === 'exact' ? swiftNoiseBandwidth(loop) : bandwidth;
   if (actual === null) return null;
   return {
     nominal: bandwidth,
     noiseBandwidth: actual / disturbances.updateInterval,
-    terms: jitterTerms(loop, disturbances),
+    terms: jitterTerms(loop, disturbances, swiftLoopVariances),
   };
 }
 
@@ -78,7 +79,7 @@ export const rms = (variance: number | null, scale: number): number | null =>
  */
 export function leastJitter(input: SweepInput, swept: SweepPoint[], scale: number): BestBandwidth | null {
   const { phaseNoise, drift } = input.disturbances;
-  const points = phaseNoise || drift ? [...swept, ...coarse(input)].sort(byBandwidth) : swept;
+  const points = phaseNoise || drift ? [...swept, ...coarse(input, swept)].sort(byBandwidth) : swept;
   const known = points.filter(({ terms }) => terms.total !== null);
   const top = known.reduce((best, point, i) => (totalOf(point) < totalOf(known[best]!) ? i : best), 0);
   if (top <= 0 || top >= known.length - 1) return null;
@@ -89,10 +90,14 @@ export function leastJitter(input: SweepInput, swept: SweepPoint[], scale: numbe
 const byBandwidth = (one: SweepPoint, other: SweepPoint): number => one.nominal - other.nominal;
 const totalOf = ({ terms }: SweepPoint): number => terms.total as number;
 
-const coarse = (input: SweepInput): SweepPoint[] =>
-  Array.from(logarithmicPoints(narrowest, widest, coarsePoints), (bandwidth) => sweepPoint(input, bandwidth)).filter(
-    (point) => point !== null,
-  );
+/** The bandwidths beside those that are swept. */
+function coarse(input: SweepInput, swept: SweepPoint[]): SweepPoint[] {
+  const [first, last] = [swept[0]?.nominal ?? Infinity, swept.at(-1)?.nominal ?? -Infinity];
+  return [...logarithmicPoints(narrowest, widest, coarsePoints)]
+    .filter((bandwidth) => bandwidth < first || bandwidth > last)
+    .map((bandwidth) => sweepPoint(input, bandwidth))
+    .filter((point) => point !== null);
+}
 
 /** Closes in on the least total by parabolas over the logarithm of the bandwidth through three points with the least one in the middle. */
 function refined(input: SweepInput, start: Three): SweepPoint {

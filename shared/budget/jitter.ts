@@ -60,15 +60,16 @@ export function errorCovariance(
 /**
  * Every term of the jitter of one loop: σ² = Σ_l c[l]·r[l] for what comes in on the error or a word.
  *
+ * @param variancesOf how the variances are worked out: exact, or swift for a curve
  * @returns nothing but null for an unstable loop
  */
-export function jitterTerms(loop: LinearLoop, disturbances: Disturbances): JitterTerms {
+export function jitterTerms(loop: LinearLoop, disturbances: Disturbances, variancesOf = loopVariances): JitterTerms {
   const { words, updateInterval, phaseNoise } = disturbances;
   const noises = wordEntries(words, loop.order).map((noise) => ({
     ...noise,
     covariance: seenBySymbols(noise.covariance, updateInterval),
   }));
-  const variances = loopVariances(loop, [...errorNoises(disturbances), ...noises]);
+  const variances = variancesOf(loop, [...errorNoises(disturbances), ...noises]);
   if (!variances) return unknownTerms;
   const [all, selfNoise] = variances as [number, number];
   const rounding = variances.slice(2).reduce((sum, value) => sum + value, 0);

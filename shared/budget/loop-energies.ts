@@ -37,8 +37,8 @@ export function loopVariances(loop: LinearLoop, noises: readonly LoopNoise[]): n
   return noises.map((noise) => varianceOf(noise, forms[entries.indexOf(noise.entry)]));
 }
 
-const isThere = ({ covariance }: LoopNoise): boolean => covariance.some((value) => value !== 0);
-const isWhite = ({ covariance }: LoopNoise): boolean => covariance.length === 1;
+export const isThere = ({ covariance }: LoopNoise): boolean => covariance.some((value) => value !== 0);
+export const isWhite = ({ covariance }: LoopNoise): boolean => covariance.length === 1;
 const noisesAt = (noises: readonly LoopNoise[], entry: NoiseEntry): LoopNoise[] =>
   noises.filter((noise) => noise.entry === entry && isThere(noise));
 
@@ -105,24 +105,25 @@ function padded({ high, low }: Polynomial, length: number): Polynomial {
 
 /** Takes every energy, one degree after the other; false when a pole is not inside the circle. */
 function integrate(a: Polynomial, forms: Form[]): boolean {
-  const lead = at(a, 0);
+  const perLead = divide(toDoubleDouble(1), at(a, 0));
   const reversed = fromTerms([], a.high.length, 0);
   for (let k = a.high.length - 1; k >= 0; k -= 1) {
     const top = at(a, 0);
     if (!(top.high > 0)) return false;
     reverseInto(reversed, a, k);
-    const last = multiply(top, lead);
+    const perTop = divide(toDoubleDouble(1), top);
+    const perLast = multiply(perTop, perLead);
     for (const form of forms) {
       const own = at(form.plain, k);
-      form.energy = add(form.energy, divide(multiply(own, own), last));
+      form.energy = add(form.energy, multiply(multiply(own, own), perLast));
       for (const each of form.weighted) {
         const other = at(each.polynomial, k);
-        each.energy = add(each.energy, divide(multiply(own, other), last));
-        subtractProducts(each.polynomial, divide(other, top), reversed, k);
+        each.energy = add(each.energy, multiply(multiply(own, other), perLast));
+        subtractProducts(each.polynomial, multiply(other, perTop), reversed, k);
       }
-      subtractProducts(form.plain, divide(own, top), reversed, k);
+      subtractProducts(form.plain, multiply(own, perTop), reversed, k);
     }
-    subtractProducts(a, divide(at(a, k), top), reversed, k);
+    subtractProducts(a, multiply(at(a, k), perTop), reversed, k);
   }
   return true;
 }

@@ -90,7 +90,6 @@ export function logarithmicPoints(low: number, high: number, count: number): Flo
   const points = new Float64Array(count);
   const step = Math.log(high / low) / (count - 1);
   for (let i = 0; i < count; i += 1) points[i] = low * Math.exp(step * i);
-  points[0] = low;
   points[count - 1] = high;
   return points;
 }

@@ -119,11 +119,13 @@ function criticalRatios(loop: LinearLoop): number[] {
   return crossings.map((omega) => 1 / Math.sqrt(openLoopPower(loop, omega)));
 }
 
+const scanPoints = 112;
+
 /** Frequencies at which L is looked at, radians per update: two decades below the crossing, up to just below π. */
 function scanRange({ gains: { g1, g2, g3 } }: LinearLoop): Float64Array {
   const crossing = Math.max(g1, Math.sqrt(g2), Math.cbrt(g3));
   const low = Math.min(crossing, 1) / 100;
-  return logarithmicPoints(low, Math.PI * (1 - 1e-7), 160);
+  return logarithmicPoints(low, Math.PI * (1 - 1e-7), scanPoints);
 }
 
 function signChanges(value: (x: number) => number, points: Float64Array): number[] {

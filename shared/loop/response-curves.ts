@@ -5,7 +5,7 @@ import type { LinearLoop } from './linear-loop';
 import { phaseMarginDeg } from './margins';
 import type { GainCrossing } from './margins';
 
-const responsePoints = 140;
+const responsePoints = 105;
 /** The longest delay that a plan can ask for, updates. */
 const longestDelay = 64;
 
@@ -23,7 +23,7 @@ export function closedLoopShape(loop: LinearLoop, updateRateHz: number): ClosedL
   const { h, e } = responsePowers(loop, circlePoints(loop, omega));
   const frequency = Array.from(omega, (value) => value / (2 * Math.PI));
   return {
-    peakingDb: decibels(peakPower(loop, omega, h)) as number,
+    peakingDb: 10 * Math.log10(peakPower(loop, omega, h)),
     bandwidth3Db: halfPowerFrequency(loop, omega, h),
     response: {
       frequency,
@@ -46,10 +46,10 @@ function responseFrequencies({ gains: { g1, g2, g3 } }: LinearLoop): Float64Arra
   return logarithmicPoints(own / 100, Math.PI, responsePoints);
 }
 
-/** 10·log10, null where it has no value. */
+/** 10·log10 as a curve needs it, to 1e−6 dB; null where it has no value. */
 function decibels(power: number): number | null {
   const value = 10 * Math.log10(power);
-  return Number.isFinite(value) ? value : null;
+  return Number.isFinite(value) ? Math.round(1e6 * value) / 1e6 : null;
 }
 
 function peakPower(loop: LinearLoop, omega: Float64Array, h: Float64Array): number {

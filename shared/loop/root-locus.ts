@@ -4,7 +4,7 @@ import { scaledLoop } from './linear-loop';
 import type { LinearLoop } from './linear-loop';
 import { polesNear } from './poles';
 
-const ratios = 29;
+const ratios = 41;
 /** Branches that are followed beside those of the integrators: a long delay has as many as updates, most of them far inside. */
 const delayBranches = 4;
 const [least, most] = [1 / 20, 4];

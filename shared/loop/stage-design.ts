@@ -9,6 +9,7 @@ import { gainCrossings, phaseMarginDeg, stabilityLimits } from './margins';
 import { noiseBandwidth } from './noise-bandwidth';
 import { closedLoopPoles } from './poles';
 import { closedLoopShape, emptyResponse, marginCurve } from './response-curves';
+import { boundedMemo } from '../math/bounded-memo';
 import { rootLocus } from './root-locus';
 import type { StageLoop, WantedLoop } from './stage-loop';
 import { transientOf } from './transient';
@@ -31,8 +32,7 @@ export function stageDesign(input: StageInput): StageDesign {
   const { wanted, solved, words } = input;
   const { loop } = solved;
   const achieved = achievedValues(input);
-  const limits = stabilityLimits(loop);
-  const poles = closedLoopPoles(loop);
+  const { limits, ...figures } = loopFigures({ loop, updateRateHz: input.updateRateHz });
   return {
     name: wanted.stage.name,
     gains: stageGains(input),
@@ -50,10 +50,7 @@ export function stageDesign(input: StageInput): StageDesign {
     largestDelay: limits.largestDelay,
     largestGain: limits.largestGain,
     words,
-    poles,
-    ...responses(loop, poles, input.updateRateHz),
-    marginAgainstDelay: marginCurve(loop, limits.crossings),
-    rootLocus: rootLocus(loop, poles, limits.criticalRatios),
+    ...figures,
     bandwidthAgainstDelay: bandwidthAgainstDelay(loop, limits.largestDelay, wanted.loop.updateInterval),
     amplitude: amplitudeEnds(loop, input.amplitude, {
       updateInterval: wanted.loop.updateInterval,
@@ -61,6 +58,27 @@ export function stageDesign(input: StageInput): StageDesign {
     }),
   };
 }
+
+/**
+ * What follows from the unquantised loop alone. The last few are kept: while words, noise or limits are typed, the loops
+ * stay as they are.
+ */
+const loopFigures = boundedMemo(
+  ({ loop, updateRateHz }: { loop: LinearLoop; updateRateHz: number }) => {
+    const limits = stabilityLimits(loop);
+    const poles = closedLoopPoles(loop);
+    return {
+      limits,
+      poles,
+      ...responses(loop, poles, updateRateHz),
+      marginAgainstDelay: marginCurve(loop, limits.crossings),
+      rootLocus: rootLocus(loop, poles, limits.criticalRatios),
+    };
+  },
+  ({ loop: { gains, order, delay, averaged }, updateRateHz }) =>
+    [gains.g1, gains.g2, gains.g3, order, delay, averaged, updateRateHz].join(' '),
+  16,
+);
 
 function stageGains({ wanted, solved, perUnit }: StageInput): Gains {
   const { g1, g2, g3 } = solved.loop.gains;

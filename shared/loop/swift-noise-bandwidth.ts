@@ -13,15 +13,18 @@ const mostLost = 1e-5;
  */
 export function swiftNoiseBandwidth(loop: LinearLoop): number | null {
   if (loop.order === 0) return null;
-  const { g1, g2, g3 } = loop.gains;
-  const slowness = loop.order === 3 ? g3 : loop.order === 2 ? g2 : g1;
-  if (!(1e-15 / slowness < mostLost)) return noiseBandwidth(loop);
-  return halfEnergy(loop);
+  return isSwift(loop) ? halfEnergy(loop) : noiseBandwidth(loop);
+}
+
+/** Whether a loop is fast enough for doubles to keep what curves need. */
+export function isSwift({ gains: { g1, g2, g3 }, order }: LinearLoop): boolean {
+  const slowness = order === 3 ? g3 : order === 2 ? g2 : g1;
+  return 1e-15 / slowness < mostLost;
 }
 
 /** ½ Σ h², by the recursion that takes the closed-loop polynomial down degree by degree (see `noiseBandwidth`). */
 function halfEnergy(loop: LinearLoop): number | null {
-  const { a, b } = polynomials(loop);
+  const { a, b } = polynomialsInZ(loop);
   const lead = a[0] as number;
   let sum = 0;
   for (let k = a.length - 1; k > 0; k -= 1) {
@@ -50,7 +53,7 @@ function reduce(a: Float64Array, b: Float64Array, alpha: number, beta: number, k
 }
 
 /** Denominator z^E·(z − 1)^n + M and numerator M in z, highest power first, of one length. */
-function polynomials(loop: LinearLoop): { a: Float64Array; b: Float64Array } {
+export function polynomialsInZ(loop: LinearLoop): { a: Float64Array; b: Float64Array } {
   const exponent = delayExponent(loop);
   const length = exponent + loop.order + 1;
   const [a, b] = [new Float64Array(length), new Float64Array(length)];

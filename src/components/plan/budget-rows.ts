@@ -75,7 +75,7 @@ function boundRows(budget: Budget, columns: number): GainRow[] {
     }),
     put('at BnT', '', { value: best?.noiseBandwidth ?? null, decimals: 6 }),
     put('Squaring loss', 'dB', { value: decibels(budget.squaringLoss), decimals: 2 }),
-    put('Above the bound', 'dB', { value: decibels(budget.boundRatio), decimals: 2 }),
+    put('Above the Cramér–Rao bound', 'dB', { value: decibels(budget.boundRatio), decimals: 2 }),
     put('Implementation loss', 'dB', { value: loss?.lossDb ?? null, decimals: 3 }),
     put('Symbol errors with jitter', '', { value: loss?.symbolErrorRate ?? null, significant: 3, exponent: true }),
     put('without', '', { value: loss?.idealSymbolErrorRate ?? null, significant: 3, exponent: true }),
@@ -202,5 +202,5 @@ export function dominantText({ budget }: LoopDesign): string | undefined {
   if (!budget || !last?.dominant || last.total === null) return undefined;
   const share = numberText(shareOf(last, last.dominant) ?? 0, { decimals: 0 });
   const over = last.total > budget.limit ? 'above' : 'within';
-  return `Stage ${last.stage} is ${over} its limit; its largest term is ${termName(last.dominant)}, ${share} % of the total.`;
+  return `Stage ${last.stage} is ${over} its limit; its largest term is ${termName(last.dominant)}, ${share} % of the mean square.`;
 }

@@ -51,7 +51,7 @@ describe('carrierBudget', () => {
   it('sweeps every term, and agrees with the stage where it passes its bandwidth', () => {
     const { sweep, stages } = budgetOf({});
     const lengths = Object.values(sweep).map((column) => (column as unknown[]).length);
-    expect(new Set(lengths)).toEqual(new Set([33]));
+    expect(new Set(lengths)).toEqual(new Set([25]));
     const above = sweep.noiseBandwidth.findIndex((bandwidth) => bandwidth > 0.004);
     const [low, high] = [sweep.thermal[above - 1]!, sweep.thermal[above]!];
     expect(stages[0]!.thermal).toBeGreaterThan(low);

@@ -81,9 +81,12 @@ function errorFigure(
     series: stages.flatMap((stage, index) => {
       const curve = read(stage);
       if (!curve) return [];
-      const points = curve.updates.map((at, i): Point => [at, factor * curve.value[i]!]).filter(([at]) => at <= last);
-      const goesOn: Point[] =
-        curve.settled !== null && points.at(-1)![0] < last ? [[last, factor * curve.settled]] : [];
+      const points = curve.updates
+        .map((at, i): Point => [at, factor * curve.value[i]!])
+        .filter(([at], i) => at <= last || (curve.updates[i - 1] ?? 0) < last);
+      // A curve that was over before goes on where it ends; one that runs on is cut where the plot ends.
+      const over = curve.updates.at(-1)! < last;
+      const goesOn: Point[] = curve.settled !== null && over ? [[last, factor * curve.settled]] : [];
       return [{ label: stage.name, tone: toneOf(index, stages.length), points: [...points, ...goesOn] }];
     }),
   };

@@ -63,7 +63,7 @@ describe('shareOf', () => {
 describe('dominantText', () => {
   it('names the largest term of the last stage and its share', () => {
     expect(dominantText(carrier!)).toMatch(
-      /^Stage track is within its limit; its largest term is (noise|oscillator), \d+ % of the total\.$/,
+      /^Stage track is within its limit; its largest term is (noise|oscillator), \d+ % of the mean square\.$/,
     );
     expect(dominantText({ ...carrier!, budget: null })).toBeUndefined();
   });
