@@ -1,5 +1,6 @@
 import { execFileSync } from 'node:child_process';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { engineVersion } from '../../shared/engine';
 import { startTestServer, type TestServer } from '../support/test-server';
 import { createRevision, createTarget, plan } from '../support/receivers';
 
@@ -130,7 +131,7 @@ describe('a freeze', () => {
     expect(sum(manifest)).toBe(body.digest);
     const { entries, files, target } = JSON.parse(manifest) as Record<string, Record<string, unknown>[]>;
     expect(target).toEqual({ slug: 'bench', name: 'Bench' });
-    expect(entries).toMatchObject([{ slot: 'main', plan: 'Bench link', revision: 1, engine: '1.0.0' }]);
+    expect(entries).toMatchObject([{ slot: 'main', plan: 'Bench link', revision: 1, engine: engineVersion }]);
     const header = await text('main.config.h');
     expect(files).toContainEqual({ name: 'main.config.h', bytes: Buffer.byteLength(header), sha256: sum(header) });
     expect(header).toContain(version);

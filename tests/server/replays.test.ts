@@ -5,6 +5,7 @@ import { pino } from 'pino';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { repositories } from '../../server/repositories/index';
 import { workerThreadQueue } from '../../server/replay-queue/worker-threads';
+import { engineVersion } from '../../shared/engine';
 import { startTestServer, type TestServer } from '../support/test-server';
 import { check, createRevision, createTarget, plan } from '../support/receivers';
 
@@ -53,7 +54,7 @@ describe('a replay', () => {
       points: expect.anything(),
     });
     const done = await ended(body.id as number);
-    expect(done).toMatchObject({ state: 'done', pointsDone: 3, error: null, engine: '1.0.0' });
+    expect(done).toMatchObject({ state: 'done', pointsDone: 3, error: null, engine: engineVersion });
     expect(done.points.map(({ offsetHz }) => offsetHz)).toEqual([-500, 0, 500]);
     expect(['pass', 'fail', 'undecided']).toContain(done.verdict);
     const standing = await server.as('viewer').get(`/revisions/${revisionId}`).expect(200);
@@ -185,7 +186,7 @@ describe('a server that ends', () => {
       await other.services.replayQueue.start();
       while ((await replays.find(id))!.state !== 'done') await sleep(20);
       const points = await replayPoints.list(id);
-      expect((await replays.find(id))!.engine).toBe('1.0.0');
+      expect((await replays.find(id))!.engine).toBe(engineVersion);
       expect(points.map(({ point }) => point.trials)).toEqual([4, 4, 4]);
     } finally {
       await other.stop();

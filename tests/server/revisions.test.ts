@@ -3,6 +3,7 @@ import { createHash } from 'node:crypto';
 import type { Response } from 'supertest';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { canonicalJson, digestOf } from '../../server/services/digest';
+import { engineVersion } from '../../shared/engine';
 import { startTestServer, type TestServer } from '../support/test-server';
 import { createRevision, createTarget, plan } from '../support/receivers';
 
@@ -42,7 +43,7 @@ describe('a revision', () => {
     const { planId } = await createRevision(server);
     await server.as('engineer').put(`/plans/${planId}/draft`, { basedOn: 1, plan: {}, typed: {} }).expect(204);
     const { body } = await save(planId, 2, { plan: { ...plan, name: 'Renamed' }, note: 'Second.' }).expect(201);
-    expect(body).toMatchObject({ number: 2, note: 'Second.', by: { name: 'The engineer' }, engine: '1.0.0' });
+    expect(body).toMatchObject({ number: 2, note: 'Second.', by: { name: 'The engineer' }, engine: engineVersion });
     const stored = await server.as('engineer').get(`/plans/${planId}`).expect(200);
     expect(stored.body).toMatchObject({ name: 'Renamed', version: 3, draft: null, head: { number: 2 } });
     expect(stored.body.description).toEqual(body.description);
