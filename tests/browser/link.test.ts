@@ -134,7 +134,7 @@ describe.each([
     expect(await rowNumbers(page, 'Carrier loop', 'Words', 'BnT from words')).toEqual(
       effective.map((pair) => Number(noiseBandwidthBySum(pair, 3).toFixed(6))),
     );
-    expect(await rowNumbers(page, 'Carrier loop', 'Detector and range', 'Slope at lock Kd')).toEqual([
+    expect(await rowNumbers(page, 'Carrier loop, budget and acquisition', 'Detector at lock', 'Slope Kd')).toEqual([
       Number(detectorGain.toFixed(4)),
     ]);
   });
