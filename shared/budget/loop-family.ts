@@ -2,7 +2,6 @@ import { placedLoop } from '../loop/exact-gains';
 import { bandwidthOverOmega, nominalGains, thetaOf } from '../loop/gains';
 import { linearLoop } from '../loop/linear-loop';
 import type { LinearLoop } from '../loop/linear-loop';
-import type { StageLoop } from '../loop/stage-loop';
 import type { ThirdOrderForm } from '../loop/third-order-form';
 import type { CompleteCarrier, CompleteClock } from '../plan/complete';
 
@@ -39,8 +38,18 @@ export function loopOfBandwidth(
   return loop.order === order ? loop : null;
 }
 
-/** The family of one stage of a planned loop. */
+export interface FamilyStage {
+  loop: Pick<LinearLoop, 'order' | 'delay' | 'averaged'>;
+  /** Null where the order has none. */
+  damping: number | null;
+}
+
+/**
+ * The family of one stage of a planned loop.
+ *
+ * @param stage what is wanted of it; its own gains do not count
+ */
 export const familyOf = (
   { method, prewarp, thirdOrder }: Pick<CompleteCarrier | CompleteClock, 'method' | 'prewarp' | 'thirdOrder'>,
-  { loop: { order, delay, averaged }, damping }: StageLoop,
+  { loop: { order, delay, averaged }, damping }: FamilyStage,
 ): LoopFamily => ({ order, delay, averaged, method, prewarp, damping: damping ?? 1, form: thirdOrder });

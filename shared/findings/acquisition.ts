@@ -146,15 +146,24 @@ function timeAllowed(view: LoopView, first: StageView): { limit: number; pointer
     : { limit: most, pointer: '/limits/acquisitionSymbols' };
 }
 
-/** Pull-in time falls with the third power of the bandwidth, settling with the first. */
 function faster(view: LoopView, first: StageView, limit: number): Remedy | null {
   const pull = view.design.acquisition.pullInSymbols as number;
   const settling = (first.result.settlingUpdates as number) * view.loop.updateInterval;
-  const time = (factor: number): number => pull / factor ** 3 + settling / factor;
+  const time = (factor: number): number => scaledTime({ pull, settling }, factor);
   let factor = 1;
   while (spareTime * estimateFactor * time(factor) > limit && factor < 100) factor *= 1.05;
   const value = twoDigitsUp(factor * askedOf(first));
   return isBearable(first, factor) && loopAt(first, value) !== null ? setBandwidth(first, value) : moreTime(view);
+}
+
+/** Pull-in time falls with the third power of the bandwidth, settling with the first. */
+export const scaledTime = ({ pull, settling }: AcquisitionTime, factor: number): number =>
+  pull / factor ** 3 + settling / factor;
+
+export interface AcquisitionTime {
+  /** Pull-in from the largest offset of the plan, symbols. */
+  pull: number;
+  settling: number;
 }
 
 /** Whether a stage that is wider by a factor still bears its delay. */

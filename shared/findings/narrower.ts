@@ -50,7 +50,7 @@ export function loopAt({ key, index, stage, loop, plan }: StageView, value: numb
 /** BnT that a stage asks for, also where it asks for a natural frequency. */
 export function nominalBandwidth({ stage, result, loop, plan }: StageView): number {
   if (stage.noiseBandwidth !== undefined) return stage.noiseBandwidth;
-  if (loop.method === 'exact') return result.noiseBandwidth.exact as number;
+  if (loop.method === 'exact' && result.noiseBandwidth.exact !== null) return result.noiseBandwidth.exact;
   const perOmega = bandwidthOverOmega(loop.order, stage.damping ?? 1, loop.thirdOrder);
   return (2 * Math.PI * (stage.naturalFrequencyHz as number) * perOmega) / plan.signal.symbolRateBd;
 }

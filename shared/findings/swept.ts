@@ -1,3 +1,4 @@
+import { logarithmicCrossings } from '../math/crossing';
 import type { JitterSweep } from '../model/design';
 import { twoDigitsDown } from './finding';
 import type { Remedy } from './finding';
@@ -14,15 +15,12 @@ export function narrowerWithin(at: StageView, term: SweptTerm, limit: number): R
   return widest === null ? null : setBandwidth(at, twoDigitsDown((askedOf(at) * widest) / nominal));
 }
 
-/** Widest swept BnT below the present one whose term is within the limit, between two points by logarithms. */
+/** Widest BnT below the present one whose term is within the limit; that of a swept point where the curve has no crossing. */
 function widestWithin({ design: { budget } }: StageView, term: SweptTerm, limit: number, below: number): number | null {
   if (!budget) return null;
   const { noiseBandwidth, [term]: values } = budget.sweep;
-  const kept = (i: number): boolean => (values[i] ?? Infinity) <= limit;
-  const last = noiseBandwidth.findLastIndex((bandwidth, i) => bandwidth < below && kept(i));
+  const last = noiseBandwidth.findLastIndex((x, i) => x < below && (values[i] ?? Infinity) <= limit);
   if (last < 0) return null;
-  const [from, to] = [noiseBandwidth[last] as number, noiseBandwidth[last + 1] ?? Infinity];
-  const [low, high] = [values[last] as number, values[last + 1] ?? null];
-  if (high === null || !(low > 0) || !(high > limit)) return from;
-  return from * (to / from) ** (Math.log(limit / low) / Math.log(high / low));
+  const from = noiseBandwidth[last] as number;
+  return logarithmicCrossings(noiseBandwidth, values, limit).find(({ x, rising }) => rising && x >= from)?.x ?? from;
 }

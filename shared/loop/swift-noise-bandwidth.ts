@@ -1,6 +1,7 @@
 import { forwardPolynomial, delayExponent } from './linear-loop';
 import type { LinearLoop } from './linear-loop';
 import { noiseBandwidth } from './noise-bandwidth';
+import { swiftEnergies } from './swift-energies';
 
 /** Share of the result that doubles may lose; beyond it the recursion in double-double is taken. */
 const mostLost = 1e-5;
@@ -22,34 +23,10 @@ export function isSwift({ gains: { g1, g2, g3 }, order }: LinearLoop): boolean {
   return 1e-15 / slowness < mostLost;
 }
 
-/** ½ Σ h², by the recursion that takes the closed-loop polynomial down degree by degree (see `noiseBandwidth`). */
 function halfEnergy(loop: LinearLoop): number | null {
   const { a, b } = polynomialsInZ(loop);
-  const lead = a[0] as number;
-  let sum = 0;
-  for (let k = a.length - 1; k > 0; k -= 1) {
-    const top = a[0] as number;
-    if (!(top > 0)) return null;
-    const [alpha, beta] = [(a[k] as number) / top, (b[k] as number) / top];
-    sum += (b[k] as number) * beta;
-    reduce(a, b, alpha, beta, k);
-  }
-  const last = a[0] as number;
-  if (!(last > 0)) return null;
-  const energy = (sum + (b[0] as number) ** 2 / last) / lead;
-  return Number.isFinite(energy) && energy > 0 ? energy / 2 : null;
-}
-
-/** a_i ← a_i − α·a_(k−i) and b_i ← b_i − β·a_(k−i), with the a of before, from both ends at once. */
-function reduce(a: Float64Array, b: Float64Array, alpha: number, beta: number, k: number): void {
-  for (let i = 0, j = k; i <= j; i += 1, j -= 1) {
-    const [low, high] = [a[i] as number, a[j] as number];
-    a[i] = low - alpha * high;
-    b[i] = (b[i] as number) - beta * high;
-    if (i === j) continue;
-    a[j] = high - alpha * low;
-    b[j] = (b[j] as number) - beta * low;
-  }
+  const energy = swiftEnergies(a, [{ plain: b, weighted: null }])?.[0];
+  return energy !== undefined && energy > 0 ? energy / 2 : null;
 }
 
 /** Denominator z^E·(z − 1)^n + M and numerator M in z, highest power first, of one length. */
@@ -69,7 +46,7 @@ export function polynomialsInZ(loop: LinearLoop): { a: Float64Array; b: Float64A
 }
 
 /** A polynomial in w = z − 1, constant first, in powers of z, highest first: Horner's rule in z − 1. */
-function inPowersOfZ(coefficients: readonly number[]): number[] {
+export function inPowersOfZ(coefficients: readonly number[]): number[] {
   let powers: number[] = [];
   for (const coefficient of [...coefficients].reverse()) {
     const next = [...powers, 0].map((value, i) => value - (powers[i - 1] ?? 0));

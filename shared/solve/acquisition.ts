@@ -1,11 +1,17 @@
 import type { Solution } from '../model/design';
 import { numberText, quantityText } from '../quantities/format';
 import { fieldNumber } from '../plan/fields';
+import { scaledTime } from '../findings/acquisition';
+import type { AcquisitionTime } from '../findings/acquisition';
+import { bisect } from '../math/root-search';
 import { stageAt } from '../findings/loop-view';
 import type { LoopView, StageView } from '../findings/loop-view';
-import { bandwidthChange, presentBandwidth, safe, solution } from './solution';
+import { bandwidthChange, safe, solution } from './solution';
+import { nominalBandwidth } from '../findings/narrower';
 
 const limit = '/limits/acquisitionSymbols';
+/** Logarithm of how much wider or narrower than now is looked at. */
+const widestFactor = 10;
 
 /** The narrowest bandwidth of the first stage that acquires in time, and the largest offset that it acquires from. */
 export function acquisitionSolutions(view: LoopView): Solution[] {
@@ -17,27 +23,15 @@ export function acquisitionSolutions(view: LoopView): Solution[] {
   return [narrowestBandwidth(at, time), ...largestOffset(at, time)];
 }
 
-interface Time {
-  /** Pull-in from the largest offset of the plan, symbols. */
-  pull: number;
-  settling: number;
-}
-
 const limitText = ({ plan }: LoopView): string =>
   `Acquisition, max ${numberText(plan.limits.acquisitionSymbols)} symbols`;
 
-/** Pull-in time falls with the third power of the bandwidth, settling with the first. */
-function narrowestBandwidth(view: StageView, { pull, settling }: Time): Solution {
+function narrowestBandwidth(view: StageView, time: AcquisitionTime): Solution {
   const { stage, plan } = view;
   const allowed = plan.limits.acquisitionSymbols;
-  const present = presentBandwidth(view);
-  let [low, high] = [1e-4, 1e4];
-  for (let round = 0; round < 60; round += 1) {
-    const factor = Math.sqrt(low * high);
-    if (pull / factor ** 3 + settling / factor > allowed) low = factor;
-    else high = factor;
-  }
-  const value = present * high;
+  const present = nominalBandwidth(view);
+  const over = (x: number): number => Math.log(scaledTime(time, Math.exp(x)) / allowed);
+  const value = present * Math.exp(bisect(over, -widestFactor, widestFactor));
   const parts = {
     slug: 'acquisition.narrowest-bandwidth',
     stage: stage.name,
@@ -62,7 +56,7 @@ function narrowestBandwidth(view: StageView, { pull, settling }: Time): Solution
  *
  * @see F. Gardner, "Phaselock Techniques", 3rd ed. 2005, for the pull-in time
  */
-function largestOffset(view: StageView, { settling }: Time): Solution[] {
+function largestOffset(view: StageView, { settling }: AcquisitionTime): Solution[] {
   const { key, plan, result, design } = view;
   const { acquisition: range } = design;
   const [zeta, naturalHz] = [result.damping.exact, result.naturalFrequencyHz.exact];

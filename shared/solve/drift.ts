@@ -4,10 +4,12 @@ import type { LinearLoop } from '../loop/linear-loop';
 import type { Solution } from '../model/design';
 import { fieldNumber } from '../plan/fields';
 import { numberText, quantityText } from '../quantities/format';
+import { bisect } from '../math/root-search';
 import { lastStage } from '../findings/loop-view';
 import type { LoopView, StageView } from '../findings/loop-view';
 import { stageFamily } from './margin';
-import { bandwidthChange, presentBandwidth, safe, solution } from './solution';
+import { bandwidthChange, safe, solution } from './solution';
+import { nominalBandwidth } from '../findings/narrower';
 
 const pointer = '/environment/dopplerRateHzPerS';
 const [least, most] = [1e-7, 0.2];
@@ -23,7 +25,7 @@ export function driftSolutions(view: LoopView): Solution[] {
   return [narrowestBandwidth(at), largestRate(at)];
 }
 
-const shared = ({ plan, stage }: StageView) => ({
+const driftLimit = ({ plan, stage }: StageView) => ({
   stage: stage.name,
   limit: '/limits/phaseJitterDeg',
   limitText: `Standing error under drift, max ${numberText(plan.limits.phaseJitterDeg)}°`,
@@ -41,20 +43,17 @@ function narrowestBandwidth(view: StageView): Solution {
   const family = stageFamily(view);
   const gain = (bandwidth: number): number => loopOfBandwidth(family, bandwidth)?.gains.g2 ?? 0;
   const parts = {
-    ...shared(view),
+    ...driftLimit(view),
     slug: 'drift.narrowest-bandwidth',
     title: `narrowest BnT of ${stage.name}`,
     sense: 'min' as const,
-    present: presentBandwidth(view),
+    present: nominalBandwidth(view),
   };
-  let [low, high] = [least, most];
-  while (high > 1e-3 && gain(high) === 0) high /= 1.3;
-  if (gain(high) < wanted) return solution(view, { ...parts, note: 'No bandwidth follows this drift; take order 3.' });
-  for (let round = 0; round < 60; round += 1) {
-    const middle = Math.sqrt(low * high);
-    if (gain(middle) < wanted) low = middle;
-    else high = middle;
-  }
+  let widest = most;
+  while (widest > 1e-3 && gain(widest) === 0) widest /= 1.3;
+  if (gain(widest) < wanted)
+    return solution(view, { ...parts, note: 'No bandwidth follows this drift; take order 3.' });
+  const high = Math.exp(bisect((x) => gain(Math.exp(x)) - wanted, Math.log(least), Math.log(widest)));
   const found = loop.method === 'exact' ? noiseBandwidth(loopOfBandwidth(family, high) as LinearLoop) : high;
   if (found === null) return solution(view, { ...parts, note: 'No stable loop follows this drift; take order 3.' });
   const value = found / loop.updateInterval;
@@ -66,7 +65,7 @@ function largestRate(view: StageView): Solution {
   const value = ((plan.limits.phaseJitterDeg * Math.PI) / 180) * (result.gains.g2 / perRate(view));
   const typed = safe(value, 'max');
   return solution(view, {
-    ...shared(view),
+    ...driftLimit(view),
     slug: 'drift.largest-rate',
     title: `largest Doppler rate that ${stage.name} follows`,
     sense: 'max',

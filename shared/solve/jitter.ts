@@ -2,8 +2,9 @@ import type { Budget, Solution } from '../model/design';
 import { numberText } from '../quantities/format';
 import { lastStage } from '../findings/loop-view';
 import type { LoopView, StageView } from '../findings/loop-view';
-import { logarithmicCrossings } from './crossing';
-import { bandwidthChange, presentBandwidth, solution } from './solution';
+import { logarithmicCrossings } from '../math/crossing';
+import { bandwidthChange, solution } from './solution';
+import { nominalBandwidth } from '../findings/narrower';
 
 /** The widest and the narrowest bandwidth of the last stage whose jitter stays within its limit. */
 export function jitterSolutions(view: LoopView): Solution[] {
@@ -52,7 +53,7 @@ function bound(
     limit: budget.unit === 'deg' ? '/limits/phaseJitterDeg' : '/limits/timingJitterSymbols',
     limitText: `${budget.unit === 'deg' ? 'Phase' : 'Timing'} jitter, max ${amount(budget.limit, budget)} rms`,
     sense,
-    present: presentBandwidth(view),
+    present: nominalBandwidth(view),
     value,
     note: value === null ? note : null,
     change: value === null ? null : bandwidthChange(view, value, sense),

@@ -1,4 +1,4 @@
-import { loopOfBandwidth } from '../budget/loop-family';
+import { familyOf, loopOfBandwidth } from '../budget/loop-family';
 import { gainCrossings, phaseMarginDeg } from '../loop/margins';
 import type { LinearLoop } from '../loop/linear-loop';
 import { noiseBandwidth } from '../loop/noise-bandwidth';
@@ -7,8 +7,9 @@ import type { Solution } from '../model/design';
 import { numberText } from '../quantities/format';
 import { numberOf, pointerOf, worstStage } from '../findings/loop-view';
 import type { LoopView, StageView } from '../findings/loop-view';
-import { lastAtLeast } from './crossing';
-import { bandwidthChange, presentBandwidth, solution } from './solution';
+import { lastAtLeast } from '../math/crossing';
+import { bandwidthChange, solution } from './solution';
+import { nominalBandwidth } from '../findings/narrower';
 
 /** Bandwidths that are looked at, cycles per update. */
 const [least, most] = [1e-7, 0.5];
@@ -26,7 +27,7 @@ const limitText = ({ plan }: LoopView): string => `Phase margin, min ${numberTex
 function widestBandwidth(view: StageView): Solution {
   const { stage, loop, plan } = view;
   const { updateInterval } = loop;
-  const widest = widestNominal(view, presentBandwidth(view) * updateInterval);
+  const widest = widestNominal(view, nominalBandwidth(view) * updateInterval);
   const parts = {
     slug: 'margin.widest-bandwidth',
     stage: stage.name,
@@ -34,7 +35,7 @@ function widestBandwidth(view: StageView): Solution {
     limit,
     limitText: limitText(view),
     sense: 'max' as const,
-    present: presentBandwidth(view),
+    present: nominalBandwidth(view),
   };
   if (widest === null)
     return solution(view, {
@@ -63,15 +64,11 @@ function widestNominal(view: StageView, start: number): { nominal: number; exact
 const marginOf = (loop: LinearLoop): number | null => phaseMarginDeg(gainCrossings(loop), 0);
 
 /** The loops of a stage that differ in bandwidth alone. */
-export const stageFamily = ({ loop, stage }: StageView) => ({
-  order: loop.order,
-  damping: stage.damping ?? 1,
-  delay: loop.delay,
-  averaged: averagedSymbols(loop.updateInterval),
-  method: loop.method,
-  prewarp: loop.prewarp,
-  form: loop.thirdOrder,
-});
+export function stageFamily({ loop, stage }: StageView) {
+  const { order, delay, updateInterval } = loop;
+  const averaged = averagedSymbols(updateInterval);
+  return familyOf(loop, { loop: { order, delay, averaged }, damping: stage.damping ?? null });
+}
 
 /** The curve of the margin over the delay is that of fixed gains; gains that are solved with the delay follow it. */
 function largestDelay(view: StageView): Solution {

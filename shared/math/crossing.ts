@@ -1,3 +1,5 @@
+import { bisect } from './root-search';
+
 /** Where a curve passes a level. */
 export interface Crossing {
   x: number;
@@ -21,21 +23,9 @@ export function logarithmicCrossings(x: readonly number[], y: readonly (number |
     const [before, after] = [points[i - 1] as [number, number], points[i] as [number, number]];
     if (before[1] < 0 === after[1] < 0) continue;
     const around = points.slice(Math.max(0, i - 2), i + 2);
-    found.push({ x: Math.exp(rootWithin(around, before, after)), rising: after[1] >= 0 });
+    found.push({ x: Math.exp(bisect((x) => through(around, x), before[0], after[0])), rising: after[1] >= 0 });
   }
   return found;
-}
-
-/** Root of the polynomial through some points between two of them, by bisection. */
-function rootWithin(around: [number, number][], from: [number, number], to: [number, number]): number {
-  const rising = to[1] >= 0;
-  let [low, high] = [from[0], to[0]];
-  for (let round = 0; round < 50; round += 1) {
-    const middle = (low + high) / 2;
-    if (through(around, middle) >= 0 === rising) high = middle;
-    else low = middle;
-  }
-  return (low + high) / 2;
 }
 
 /** The polynomial through the points (Lagrange). */
